@@ -1,0 +1,28 @@
+/* notchwright - strain-life notch analysis. GPL-3.0-or-later.
+ *
+ * Everything the library offers, in the order in which data flows.
+ */
+#ifndef NOTCHWRIGHT_NOTCHWRIGHT_H
+#define NOTCHWRIGHT_NOTCHWRIGHT_H
+
+#include "notchwright/status.h"
+#include "notchwright/quantity.h"
+#include "notchwright/material.h"
+#include "notchwright/history.h"
+#include "notchwright/notch.h"
+#include "notchwright/response.h"
+#include "notchwright/life.h"
+#include "notchwright/assessment.h"
+#include "notchwright/output.h"
+
+#ifdef __cplusplus
+extern "C" {
+#endif
+
+/* Version of the library, "1.0.0". */
+NW_API const char *nw_version(void);
+
+#ifdef __cplusplus
+}
+#endif
+#endif

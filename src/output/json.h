@@ -1,0 +1,27 @@
+/* Small change for JSON output. */
+#ifndef NW_OUTPUT_JSON_H
+#define NW_OUTPUT_JSON_H
+
+#include "notchwright/status.h"
+
+#include <jansson.h>
+#include <math.h>
+
+enum { NW_JSON_FLAGS = JSON_REAL_PRECISION(15) };
+
+/* A number, or null when it does not exist. */
+static inline json_t *nw_json_number(double value)
+{
+    return isfinite(value) ? json_real(value) : json_null();
+}
+
+/* A text, or null when it is empty or NULL; text that is no UTF-8 has its odd bytes replaced. */
+json_t *nw_json_text(const char *text);
+
+/* A whole number where it is one. */
+json_t *nw_json_count(double value);
+
+/* Cautions as [{code, about, text}]. */
+json_t *nw_json_cautions(const nw_cautions *cautions);
+
+#endif
