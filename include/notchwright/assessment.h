@@ -16,7 +16,11 @@ extern "C" {
 #endif
 
 /* What the values of a history are, after scale and offset. */
-typedef enum nw_load_kind { NW_NOMINAL_STRESS, NW_NOTCH_ELASTIC_STRESS, NW_NOTCH_STRAIN } nw_load_kind;
+typedef enum nw_load_kind {
+    NW_NOMINAL_STRESS,
+    NW_NOTCH_ELASTIC_STRESS,
+    NW_NOTCH_STRAIN
+} nw_load_kind;
 
 NW_API const char *nw_load_kind_name(nw_load_kind kind);
 
@@ -48,7 +52,8 @@ typedef struct nw_case {
     bool plastic_net_section;
     double limit_load_ratio;
     char *curve_file;
-    double curve_stress_factor; /* MPa per bare stress unit of the curve file; NAN: its header must say */
+    double
+        curve_stress_factor; /* MPa per bare stress unit of the curve file; NAN: its header must say */
     double residual_stress_mpa;
     nw_load *loads; /* [load_count] */
     size_t load_count;
@@ -106,11 +111,11 @@ typedef struct nw_assessment {
     double damage_first_block, damage_per_block;
     double life_blocks; /* infinite: no damage */
     bool has_target, target_reached;
-    double loops_total; /* closed loops of the repeating block */
+    double loops_total;    /* closed loops of the repeating block */
     nw_loop_result *loops; /* [loop_count], most damaging first */
     size_t loop_count;     /* all distinct ones, or the worst when not all were asked for */
     nw_left_out left_out;
-    double nominal_max_mpa; /* largest |nominal stress|; NAN where unknown */
+    double nominal_max_mpa;    /* largest |nominal stress|; NAN where unknown */
     const nw_notch_rule *rule; /* in use */
     bool endurance_exceeded;
     double notch_curve_error;
@@ -119,8 +124,8 @@ typedef struct nw_assessment {
 } nw_assessment;
 
 typedef struct nw_assess_options {
-    bool all_loops;  /* keep every distinct loop; else the worst ones */
-    size_t worst;    /* how many, without all_loops */
+    bool all_loops; /* keep every distinct loop; else the worst ones */
+    size_t worst;   /* how many, without all_loops */
 } nw_assess_options;
 
 /* Assesses a case.

@@ -16,8 +16,9 @@ extern "C" {
 
 /* How to read a history file. Zero-initialise for the defaults. */
 typedef struct nw_history_options {
-    const char *column; /* header name (with or without its [unit]) or 1-based number; NULL: the only one */
-    char decimal;       /* '.' (also 0) or ',' */
+    const char *
+        column; /* header name (with or without its [unit]) or 1-based number; NULL: the only one */
+    char decimal; /* '.' (also 0) or ',' */
 } nw_history_options;
 
 typedef struct nw_history nw_history;
@@ -33,8 +34,8 @@ NW_API nw_status nw_history_open(const char *path, const nw_history_options *opt
  *   values    [capacity] receives samples in column units, all finite
  *   count     how many; 0 at the end
  * Returns NW_OK; NW_INPUT with the place of a value that is no finite number or of a ragged row; NW_FILE. */
-NW_API nw_status nw_history_read(nw_history *history, double *values, size_t capacity, size_t *count,
-                                 nw_diagnostics *diagnostics);
+NW_API nw_status nw_history_read(nw_history *history, double *values, size_t capacity,
+                                 size_t *count, nw_diagnostics *diagnostics);
 
 /* Unit that the header gives the column, as in "load[MPa]", or "". */
 NW_API const char *nw_history_unit(const nw_history *history);
@@ -54,8 +55,9 @@ typedef struct nw_event {
     size_t count;
     size_t capacity;
     uint64_t samples;
-    double repeats;                /* >= 1, whole */
-    double ignore_ranges_below_mpa; /* closed loops with a smaller range of L are left out; 0: none */
+    double repeats; /* >= 1, whole */
+    double
+        ignore_ranges_below_mpa; /* closed loops with a smaller range of L are left out; 0: none */
 } nw_event;
 
 /* Feeds samples to an event one batch after the other.

@@ -59,7 +59,7 @@ NW_API const char *nw_below_endurance_name(nw_below_endurance mode);
 
 typedef struct nw_life_options {
     const nw_correction *correction;
-    double walker_gamma;               /* for walker */
+    double walker_gamma; /* for walker */
     nw_below_endurance below_endurance;
     double endurance_strain_amplitude; /* for the two harmless options */
     double surface_factor;             /* 1: none */

@@ -19,8 +19,8 @@ typedef struct nw_rule_input {
     double strength_coefficient_mpa; /* K' */
     double hardening_exponent;       /* n' */
     double factor;                   /* Kt or Kf: L = factor x nominal stress */
-    double limit_load_ratio;         /* Kp: plastic limit load over load at first yield of the notch */
-    bool plastic_net_section;        /* nominal stress on the cyclic curve too */
+    double limit_load_ratio;  /* Kp: plastic limit load over load at first yield of the notch */
+    bool plastic_net_section; /* nominal stress on the cyclic curve too */
 } nw_rule_input;
 
 /* A notch rule as one equation beside the cyclic curve, in the unknowns

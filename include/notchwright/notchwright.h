@@ -5,15 +5,15 @@
 #ifndef NOTCHWRIGHT_NOTCHWRIGHT_H
 #define NOTCHWRIGHT_NOTCHWRIGHT_H
 
-#include "notchwright/status.h"
-#include "notchwright/quantity.h"
-#include "notchwright/material.h"
-#include "notchwright/history.h"
-#include "notchwright/notch.h"
-#include "notchwright/response.h"
-#include "notchwright/life.h"
 #include "notchwright/assessment.h"
+#include "notchwright/history.h"
+#include "notchwright/life.h"
+#include "notchwright/material.h"
+#include "notchwright/notch.h"
 #include "notchwright/output.h"
+#include "notchwright/quantity.h"
+#include "notchwright/response.h"
+#include "notchwright/status.h"
 
 #ifdef __cplusplus
 extern "C" {

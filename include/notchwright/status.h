@@ -22,13 +22,13 @@ extern "C" {
 #endif
 
 /* X(code, exit status of the program, text) */
-#define NW_STATUS_LIST(X)                                                                          \
-    X(NW_OK, 0, "done")                                                                            \
-    X(NW_BELOW_TARGET, 1, "life below the target")                                                 \
-    X(NW_USAGE, 2, "wrong usage")                                                                  \
-    X(NW_INPUT, 3, "input refused")                                                                \
-    X(NW_COMPUTE, 4, "could not be computed")                                                      \
-    X(NW_FILE, 5, "file trouble")                                                                  \
+#define NW_STATUS_LIST(X)                          \
+    X(NW_OK, 0, "done")                            \
+    X(NW_BELOW_TARGET, 1, "life below the target") \
+    X(NW_USAGE, 2, "wrong usage")                  \
+    X(NW_INPUT, 3, "input refused")                \
+    X(NW_COMPUTE, 4, "could not be computed")      \
+    X(NW_FILE, 5, "file trouble")                  \
     X(NW_MEMORY, 5, "out of memory")
 
 typedef enum nw_status {

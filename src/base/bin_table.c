@@ -7,8 +7,7 @@ enum { FIRST_TOP_BITS = 4, LAST_TOP_BITS = 9 };
 
 /* Chebyshev-Lobatto points cos(i pi/5)/2. */
 static const double nodes[NW_BIN_COEFFICIENTS] = {
-    -0.5, -0.40450849718747373, -0.15450849718747373, 0.15450849718747373, 0.40450849718747373,
-    0.5,
+    -0.5, -0.40450849718747373, -0.15450849718747373, 0.15450849718747373, 0.40450849718747373, 0.5,
 };
 
 /* Where the interpolation error is checked: between the outer and between the inner points. */
@@ -21,10 +20,10 @@ void nw_bin_table_clear(nw_bin_table *table)
     table->bins = 0;
 }
 
-/* Newton's divided differences, then powers of t. */
-static void interpolate(const double *values, double *c)
+/* Newton's divided differences, then powers of t; writes every `stride`-th coefficient. */
+static void interpolate(const double *values, double *to, unsigned stride)
 {
-    double d[NW_BIN_COEFFICIENTS];
+    double d[NW_BIN_COEFFICIENTS], c[NW_BIN_COEFFICIENTS];
     for (int i = 0; i < NW_BIN_COEFFICIENTS; i++) {
         d[i] = values[i];
     }
@@ -42,6 +41,18 @@ static void interpolate(const double *values, double *c)
         }
         c[0] = d[level] - nodes[level] * c[0];
     }
+    for (int i = 0; i < NW_BIN_COEFFICIENTS; i++) {
+        to[(unsigned)i * stride] = c[i];
+    }
+}
+
+static double polynomial_at(const double *c, unsigned stride, double t)
+{
+    double own[NW_BIN_COEFFICIENTS];
+    for (int i = 0; i < NW_BIN_COEFFICIENTS; i++) {
+        own[i] = c[(unsigned)i * stride];
+    }
+    return nw_bin_polynomial(own, t);
 }
 
 /* x at position t of a bin; t = 1/2 is the first x of the next bin. */
@@ -69,7 +80,7 @@ static nw_status build_bin(nw_bin_table *table, uint64_t bin, nw_bin_function fu
     }
     double *c = table->coefficients + bin * table->width * NW_BIN_COEFFICIENTS;
     for (unsigned f = 0; f < table->width; f++) {
-        interpolate(samples[f], c + f * NW_BIN_COEFFICIENTS);
+        interpolate(samples[f], c + f, table->width);
     }
     for (size_t i = 0; i < sizeof checks / sizeof checks[0]; i++) {
         nw_status status = function(data, x_at(table, bin, checks[i]), values);
@@ -77,7 +88,7 @@ static nw_status build_bin(nw_bin_table *table, uint64_t bin, nw_bin_function fu
             return status;
         }
         for (unsigned f = 0; f < table->width; f++) {
-            double found = nw_bin_polynomial(c + f * NW_BIN_COEFFICIENTS, checks[i]);
+            double found = polynomial_at(c + f, table->width, checks[i]);
             double error = fabs(found - values[f]) / fabs(values[f]);
             if (!(error <= table->relative_error)) {
                 table->relative_error = error;
@@ -94,8 +105,7 @@ static nw_status build_at(nw_bin_table *table, double low, double high, double t
     table->first = nw_bits_of(low) >> shift;
     table->bins = (nw_bits_of(high) >> shift) - table->first + 1;
     table->relative_error = 0.0;
-    table->coefficients =
-        malloc(table->bins * table->width * NW_BIN_COEFFICIENTS * sizeof(double));
+    table->coefficients = malloc(table->bins * table->width * NW_BIN_COEFFICIENTS * sizeof(double));
     if (table->coefficients == NULL) {
         return NW_MEMORY;
     }

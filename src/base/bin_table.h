@@ -19,7 +19,7 @@ typedef struct nw_bin_table {
     unsigned width;    /* functions in the table, 1 or 2 */
     uint64_t first;    /* number of the first bin */
     uint64_t bins;
-    double *coefficients;  /* [bins][width][6], lowest power first, in t = -1/2 .. 1/2 */
+    double *coefficients;  /* [bins][6][width], lowest power first, in t = -1/2 .. 1/2 */
     double relative_error; /* largest seen while building */
 } nw_bin_table;
 
@@ -56,11 +56,29 @@ static inline double nw_bin_position(const nw_bin_table *table, double x)
     return t - 1.5;
 }
 
-/* The polynomial, arranged for short dependency chains. */
+/* The polynomials of a bin, arranged for short dependency chains: of one function, and of two at once. */
 static inline double nw_bin_polynomial(const double *c, double t)
 {
     double t2 = t * t;
     return (c[0] + c[1] * t) + t2 * ((c[2] + c[3] * t) + t2 * (c[4] + c[5] * t));
+}
+
+typedef double nw_pair __attribute__((vector_size(16)));
+
+static inline nw_pair nw_pair_load(const double *from)
+{
+    nw_pair pair;
+    memcpy(&pair, from, sizeof pair);
+    return pair;
+}
+
+static inline nw_pair nw_bin_polynomial_pair(const double *c, double t)
+{
+    nw_pair x = {t, t};
+    nw_pair x2 = x * x;
+    return (nw_pair_load(c) + nw_pair_load(c + 2) * x) +
+           x2 * ((nw_pair_load(c + 4) + nw_pair_load(c + 6) * x) +
+                 x2 * (nw_pair_load(c + 8) + nw_pair_load(c + 10) * x));
 }
 
 #endif

@@ -102,7 +102,8 @@ static void check_limits(nw_field_reader *reader, const nw_node *node, const cha
     const char *unit = internal_unit(row->dimension);
     char low[48] = "", high[48] = "";
     if (isfinite(row->low)) {
-        snprintf(low, sizeof low, "%s %.6g%s", row->low_open ? "above" : "at least", row->low, unit);
+        snprintf(low, sizeof low, "%s %.6g%s", row->low_open ? "above" : "at least", row->low,
+                 unit);
     }
     if (isfinite(row->high)) {
         snprintf(high, sizeof high, "%s%s %.6g%s", low[0] == '\0' ? "" : " and ",
@@ -151,9 +152,8 @@ static void read_text(nw_field_reader *reader, const nw_node *node, const char *
     if (node->kind != NW_NODE_SCALAR) {
         nw_field_fault(reader, node, path, row->key, "found %s, expected text", kind_of(node));
     } else if (strlen(node->scalar) >= row->size) {
-        nw_field_fault(reader, node, path, row->key,
-                       "found %zu characters, expected at most %zu", strlen(node->scalar),
-                       row->size - 1);
+        nw_field_fault(reader, node, path, row->key, "found %zu characters, expected at most %zu",
+                       strlen(node->scalar), row->size - 1);
     } else {
         nw_text_copy(value, row->size, node->scalar);
     }
@@ -227,11 +227,11 @@ static void refuse_unknown(nw_field_reader *reader, const nw_node *map, const ch
             nw_text_join(list, sizeof list, keys);
         }
         nw_place place = nw_node_key_place(entry);
-        reader->status = nw_fault(
-            reader->diagnostics, NW_INPUT, &place,
-            nw_field_path(whole, sizeof whole, path, entry->key), "unknown key; %s%s%s",
-            nearest == NULL ? "expected " : "did you mean '", nearest == NULL ? list : nearest,
-            nearest == NULL ? "" : "'?");
+        reader->status =
+            nw_fault(reader->diagnostics, NW_INPUT, &place,
+                     nw_field_path(whole, sizeof whole, path, entry->key), "unknown key; %s%s%s",
+                     nearest == NULL ? "expected " : "did you mean '",
+                     nearest == NULL ? list : nearest, nearest == NULL ? "" : "'?");
     }
 }
 

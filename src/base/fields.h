@@ -22,9 +22,9 @@ typedef struct nw_field {
     size_t offset; /* of the value in the section's struct */
     size_t size;   /* NW_FIELD_TEXT: capacity */
     bool required;
-    double low, high;             /* accepted values; low == high: no limits */
-    bool low_open, high_open;     /* the limit itself is refused */
-    const char *const *choices;   /* NW_FIELD_CHOICE, NULL-terminated */
+    double low, high;           /* accepted values; low == high: no limits */
+    bool low_open, high_open;   /* the limit itself is refused */
+    const char *const *choices; /* NW_FIELD_CHOICE, NULL-terminated */
 } nw_field;
 
 typedef struct nw_field_reader {

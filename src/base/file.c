@@ -58,9 +58,9 @@ nw_status nw_file_read(const char *path, size_t limit, char **text, size_t *leng
 {
     FILE *stream = fopen(path, "rb");
     if (stream == NULL) {
-        return errno == ENOMEM ? nw_fault(diagnostics, NW_MEMORY, NULL, NULL,
-                                          "out of memory opening %s", path)
-                               : path_fault(diagnostics, path, "opened");
+        return errno == ENOMEM
+                   ? nw_fault(diagnostics, NW_MEMORY, NULL, NULL, "out of memory opening %s", path)
+                   : path_fault(diagnostics, path, "opened");
     }
     nw_status status = read_stream(stream, path, limit, text, length, diagnostics);
     fclose(stream);

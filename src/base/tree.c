@@ -428,8 +428,8 @@ static nw_status set_along(nw_node *root, char *path, nw_node *value, const char
         if (dot == NULL) {
             return put_child(parent, index, step, value);
         }
-        nw_node *next = index < parent->count ? parent->children[index]
-                                              : add_map_child(parent, step, origin);
+        nw_node *next =
+            index < parent->count ? parent->children[index] : add_map_child(parent, step, origin);
         if (next == NULL) {
             nw_node_free(value);
             return NW_MEMORY;

@@ -21,7 +21,8 @@ static void print_help(void)
     }
     puts("\n  notchwright VERB --help   options and an example\n"
          "  notchwright --version\n\n"
-         "Life estimates can hurt people when they are wrong. This program supports the judgement of a\n"
+         "Life estimates can hurt people when they are wrong. This program supports the judgement "
+         "of a\n"
          "qualified engineer; it does not replace applicable codes, tests of the part or licensed\n"
          "practice.");
 }

@@ -5,7 +5,7 @@
 #include <string.h>
 
 static const char *const format_words[] = {"text", "json", "csv", NULL};
-static const char *const option_words[] = {"--format", "--output", "--set",  "--quiet",
+static const char *const option_words[] = {"--format", "--output",         "--set", "--quiet",
                                            "--help",   "--require-target", NULL};
 
 /* The value of "--name value" or "--name=value"; NULL when it is missing. */

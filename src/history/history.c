@@ -63,8 +63,8 @@ static nw_status open_format(nw_history *history, const nw_history_options *opti
     return history->format->open(input, options, &history->state, diagnostics);
 }
 
-nw_status nw_history_open(const char *path, const nw_history_options *options,
-                          nw_history **history, nw_diagnostics *diagnostics)
+nw_status nw_history_open(const char *path, const nw_history_options *options, nw_history **history,
+                          nw_diagnostics *diagnostics)
 {
     *history = NULL;
     nw_history *made = calloc(1, sizeof *made);

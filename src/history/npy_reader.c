@@ -144,8 +144,8 @@ static nw_status read_header(npy *file, nw_input *input, const nw_history_option
     if (status != NW_OK) {
         return status;
     }
-    size_t length = start[8] | (size_t)start[9] << 8 | (size_t)start[10] << 16 |
-                    (size_t)start[11] << 24;
+    size_t length =
+        start[8] | (size_t)start[9] << 8 | (size_t)start[10] << 16 | (size_t)start[11] << 24;
     if (start[6] < 1 || start[6] > 3 || length > 1 << 16) {
         return nw_input_fault(input, 0, 0, NW_INPUT, diagnostics,
                               ".npy: found format version %d with a header of %zu bytes, expected "

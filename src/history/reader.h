@@ -34,6 +34,7 @@ typedef struct nw_history_format {
 } nw_history_format;
 
 extern const nw_history_format nw_history_format_npy;
-extern const nw_history_format nw_history_format_text; /* recognises everything: the last one asked */
+extern const nw_history_format
+    nw_history_format_text; /* recognises everything: the last one asked */
 
 #endif

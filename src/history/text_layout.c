@@ -41,8 +41,8 @@ static const char *field_end(const nw_text_layout *layout, const char *p, const 
     for (; p < end; p++) {
         if (*p == '"') {
             quoted = !quoted;
-        } else if (!quoted && (*p == layout->delimiter ||
-                               (layout->delimiter == NW_BLANKS && *p == '\t'))) {
+        } else if (!quoted &&
+                   (*p == layout->delimiter || (layout->delimiter == NW_BLANKS && *p == '\t'))) {
             break;
         }
     }

@@ -12,10 +12,10 @@ enum { BUFFER_BYTES = 1 << 18 };
 
 typedef struct text_file {
     nw_text_layout layout;
-    char *buffer;      /* BUFFER_BYTES + 1 for a missing last line end + padding */
-    char *at;          /* next line */
-    char *lines_end;   /* end of the last whole line */
-    char *end;         /* end of the bytes read */
+    char *buffer;    /* BUFFER_BYTES + 1 for a missing last line end + padding */
+    char *at;        /* next line */
+    char *lines_end; /* end of the last whole line */
+    char *end;       /* end of the bytes read */
     bool source_ended;
     size_t line; /* number of the line at `at`, from 1 */
 } text_file;
@@ -50,8 +50,7 @@ static nw_status fill(text_file *file, nw_input *input, nw_diagnostics *diagnost
                               BUFFER_BYTES);
     }
     size_t got;
-    nw_status status =
-        nw_input_read(input, file->end, BUFFER_BYTES - kept, &got, diagnostics);
+    nw_status status = nw_input_read(input, file->end, BUFFER_BYTES - kept, &got, diagnostics);
     if (status != NW_OK) {
         return status;
     }
@@ -170,8 +169,7 @@ static nw_status text_read(void *state, nw_input *input, double *values, size_t 
         }
         char *line_end = memchr(file->at, '\n', (size_t)(file->lines_end - file->at));
         bool taken;
-        nw_status status =
-            read_line(file, input, line_end, &values[*count], &taken, diagnostics);
+        nw_status status = read_line(file, input, line_end, &values[*count], &taken, diagnostics);
         if (status != NW_OK) {
             return status;
         }
@@ -290,9 +288,8 @@ static nw_status choose_column(text_file *file, const nw_input *input, const cha
                                const char *end, const char *wanted, nw_diagnostics *diagnostics)
 {
     if (wanted == NULL) {
-        return file->layout.columns == 1
-                   ? NW_OK
-                   : column_fault(file, input, line, end, NULL, diagnostics);
+        return file->layout.columns == 1 ? NW_OK
+                                         : column_fault(file, input, line, end, NULL, diagnostics);
     }
     if (file->layout.has_header && column_by_name(file, line, end, wanted)) {
         return NW_OK;
@@ -318,8 +315,8 @@ static bool is_header(const text_file *file, const char *line, const char *end)
     return true;
 }
 
-static nw_status find_layout(text_file *file, nw_input *input,
-                             const nw_history_options *options, nw_diagnostics *diagnostics)
+static nw_status find_layout(text_file *file, nw_input *input, const nw_history_options *options,
+                             nw_diagnostics *diagnostics)
 {
     const char *first_end, *data_end;
     if (!seek_content(file, &first_end)) {
@@ -336,8 +333,7 @@ static nw_status find_layout(text_file *file, nw_input *input,
     file->layout.columns = nw_text_count_fields(&file->layout, sample, sample_end);
     const char *end = nw_text_content_end(file->at, first_end);
     file->layout.has_header = is_header(file, file->at, end);
-    nw_status status =
-        choose_column(file, input, file->at, end, options->column, diagnostics);
+    nw_status status = choose_column(file, input, file->at, end, options->column, diagnostics);
     if (status == NW_OK && file->layout.has_header) {
         if (!has_second) {
             return nw_input_fault(input, file->line + 1, 1, NW_INPUT, diagnostics,

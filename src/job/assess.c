@@ -42,8 +42,7 @@ static void free_run(run *r)
 static nw_status read_events(run *r)
 {
     r->events = calloc(r->input->load_count, sizeof *r->events);
-    return r->events == NULL ? no_memory(r)
-                             : nw_case_events(r->input, r->events, r->diagnostics);
+    return r->events == NULL ? no_memory(r) : nw_case_events(r->input, r->events, r->diagnostics);
 }
 
 /* The largest |L| that a branch or the initial curve can reach. */
@@ -89,9 +88,9 @@ static nw_status build_curve(run *r)
 /* Lives of the curve used over those of the median curve, from the log-normal scatter. */
 static double survival_factor(const nw_case *input)
 {
-    return input->survival == 0.5 ? 1.0
-                                  : pow(10.0, input->material.log10_life_sd *
-                                                  gsl_cdf_ugaussian_Qinv(input->survival));
+    return input->survival == 0.5
+               ? 1.0
+               : pow(10.0, input->material.log10_life_sd * gsl_cdf_ugaussian_Qinv(input->survival));
 }
 
 static nw_status prepare_life(run *r)
@@ -122,7 +121,7 @@ static void prepare_tally(run *r)
     }
     bool open = r->input->below_endurance == NW_HARMLESS_UNTIL_EXCEEDED;
     tally->endurance = open ? r->input->endurance_strain_amplitude : NAN;
-    tally->top_most = r->options->worst == 0               ? 1
+    tally->top_most = r->options->worst == 0              ? 1
                       : r->options->worst > NW_WORST_MOST ? NW_WORST_MOST
                                                           : r->options->worst;
     tally->stress_mean_max_mpa = -INFINITY;
@@ -262,15 +261,15 @@ static nw_status fill(run *r, nw_assessment *result)
         .strain_amplitude_max = r->tally.strain_amplitude_max,
         .stress_mean_max_mpa = r->tally.stress_mean_max_mpa,
         .rate_max = r->tally.rate_max,
-        .curve_exceeded = result->rule->is_table &&
-                          largest_load(r) > nw_notch_curve_load_max_mpa(r->curve),
+        .curve_exceeded =
+            result->rule->is_table && largest_load(r) > nw_notch_curve_load_max_mpa(r->curve),
     };
     nw_assess_cautions(r->input, &evidence, result);
     return status;
 }
 
-nw_status nw_assess(const nw_case *input, const nw_assess_options *options,
-                    nw_assessment **result, nw_diagnostics *diagnostics)
+nw_status nw_assess(const nw_case *input, const nw_assess_options *options, nw_assessment **result,
+                    nw_diagnostics *diagnostics)
 {
     run r = {.input = input, .options = options, .diagnostics = diagnostics};
     *result = NULL;

@@ -27,9 +27,10 @@ static void check_kinds(nw_field_reader *reader, const nw_node *root, nw_case *r
 {
     size_t gauges = count_kind(result, NW_NOTCH_STRAIN);
     if (gauges > 0 && gauges < result->load_count) {
-        nw_field_fault(reader, node_for(root, "load", ""), "load", "",
-                       "found events as notch_strain beside events as stress, expected all or none: "
-                       "a gauge at the root measures what the notch rule would calculate");
+        nw_field_fault(
+            reader, node_for(root, "load", ""), "load", "",
+            "found events as notch_strain beside events as stress, expected all or none: "
+            "a gauge at the root measures what the notch rule would calculate");
     }
     bool needs_kt = count_kind(result, NW_NOMINAL_STRESS) > 0 || result->plastic_net_section;
     if (needs_kt && isnan(result->kt)) {
@@ -101,9 +102,10 @@ static void resolve_endurance(nw_field_reader *reader, const nw_node *root, nw_c
 static void check_survival(nw_field_reader *reader, const nw_node *root, const nw_case *result)
 {
     if (result->survival != 0.5 && isnan(result->material.log10_life_sd)) {
-        nw_field_fault(reader, node_for(root, "life", "survival"), "life", "survival",
-                       "found %g %%, but the material gives no scatter (log10_life_sd); expected 50 %%",
-                       100.0 * result->survival);
+        nw_field_fault(
+            reader, node_for(root, "life", "survival"), "life", "survival",
+            "found %g %%, but the material gives no scatter (log10_life_sd); expected 50 %%",
+            100.0 * result->survival);
     }
 }
 

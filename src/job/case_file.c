@@ -9,7 +9,7 @@
 #include <string.h>
 
 const char *const nw_load_kind_words[] = {"nominal_stress", "notch_elastic_stress", "notch_strain",
-                                         NULL};
+                                          NULL};
 
 const char *nw_load_kind_name(nw_load_kind kind)
 {

@@ -16,8 +16,8 @@ static const char *const below_words[] = {"damages", "harmless", "harmless_until
 
 static const nw_field rows[] = {
     {.key = "mean_stress", .kind = NW_FIELD_OTHER},
-    {"walker_gamma", NW_FIELD_QUANTITY, NW_PURE, offsetof(section, walker_gamma), 0, false, 0.0, 1.0,
-     false, false, NULL},
+    {"walker_gamma", NW_FIELD_QUANTITY, NW_PURE, offsetof(section, walker_gamma), 0, false, 0.0,
+     1.0, false, false, NULL},
     {"damage_sum", NW_FIELD_QUANTITY, NW_PURE, offsetof(section, damage_sum), 0, false, 0.0, 10.0,
      true, false, NULL},
     {.key = "below_endurance",
@@ -44,7 +44,8 @@ static void read_correction(nw_field_reader *reader, const nw_node *map, nw_case
     }
     const char *keys[MOST_CORRECTIONS + 1];
     size_t count = 0;
-    for (const nw_correction *r; count < MOST_CORRECTIONS && (r = nw_correction_at(count)) != NULL;) {
+    for (const nw_correction *r;
+         count < MOST_CORRECTIONS && (r = nw_correction_at(count)) != NULL;) {
         keys[count++] = r->key;
     }
     keys[count] = NULL;
@@ -57,9 +58,8 @@ static void read_correction(nw_field_reader *reader, const nw_node *map, nw_case
     char list[300];
     const char *nearest = nw_text_nearest(word, keys);
     nw_field_fault(reader, node, "life", "mean_stress", "found '%.60s', expected %s%s%s%s", word,
-                   nw_text_join(list, sizeof list, keys),
-                   nearest == NULL ? "" : "; did you mean '", nearest == NULL ? "" : nearest,
-                   nearest == NULL ? "" : "'?");
+                   nw_text_join(list, sizeof list, keys), nearest == NULL ? "" : "; did you mean '",
+                   nearest == NULL ? "" : nearest, nearest == NULL ? "" : "'?");
 }
 
 static double or_default(double value, double otherwise)

@@ -53,8 +53,8 @@ static void read_inline(nw_field_reader *reader, const nw_node *list, const char
     load->value_count = list->count;
     for (size_t i = 0; i < list->count; i++) {
         load->values[i] = 0.0;
-        nw_field_quantity(reader, list->children[i], path, "history",
-                          plain ? NW_PURE : dimension, &load->values[i]);
+        nw_field_quantity(reader, list->children[i], path, "history", plain ? NW_PURE : dimension,
+                          &load->values[i]);
     }
     load->scale = plain ? load->scale : 1.0;
 }

@@ -61,9 +61,8 @@ static void read_rule(nw_field_reader *reader, const nw_node *map, nw_case *resu
     char list[300];
     const char *nearest = nw_text_nearest(word, keys);
     nw_field_fault(reader, node, "notch", "rule", "found '%.60s', expected %s%s%s%s", word,
-                   nw_text_join(list, sizeof list, keys),
-                   nearest == NULL ? "" : "; did you mean '", nearest == NULL ? "" : nearest,
-                   nearest == NULL ? "" : "'?");
+                   nw_text_join(list, sizeof list, keys), nearest == NULL ? "" : "; did you mean '",
+                   nearest == NULL ? "" : nearest, nearest == NULL ? "" : "'?");
 }
 
 static void read_curve_file(nw_field_reader *reader, const nw_node *map, nw_case *result)

@@ -9,10 +9,11 @@ static void material_cautions(const nw_case *input, nw_cautions *out)
     const nw_material *m = &input->material;
     if (m->estimate != NULL) {
         const nw_estimate *estimate = nw_estimate_find(m->estimate);
-        nw_caution_add(out, "estimated_material", "life_blocks",
-                       "Life estimated without tests: strain-life parameters by the %s (for %s). Lives "
-                       "from such estimates are commonly off by a factor of 3 to 10.",
-                       estimate->title, estimate->range);
+        nw_caution_add(
+            out, "estimated_material", "life_blocks",
+            "Life estimated without tests: strain-life parameters by the %s (for %s). Lives "
+            "from such estimates are commonly off by a factor of 3 to 10.",
+            estimate->title, estimate->range);
     } else if (m->basis == NW_ESTIMATED) {
         nw_caution_add(out, "estimated_material", "life_blocks",
                        "Life estimated without tests: the material file says its values are "
@@ -32,10 +33,11 @@ static void material_cautions(const nw_case *input, nw_cautions *out)
     double ratio = m->fatigue_strength_exponent / m->fatigue_ductility_exponent;
     if (m->hardening_exponent_origin == NW_GIVEN &&
         fabs(ratio - m->hardening_exponent) > 0.3 * m->hardening_exponent) {
-        nw_caution_add(out, "curves_disagree", "life_blocks",
-                       "The cyclic curve and the strain-life set disagree (n' = %.3g, b/c = %.3g): they "
-                       "were fitted separately. Both are used as given.",
-                       m->hardening_exponent, ratio);
+        nw_caution_add(
+            out, "curves_disagree", "life_blocks",
+            "The cyclic curve and the strain-life set disagree (n' = %.3g, b/c = %.3g): they "
+            "were fitted separately. Both are used as given.",
+            m->hardening_exponent, ratio);
     }
 }
 
@@ -46,43 +48,46 @@ static void load_cautions(const nw_case *input, nw_assessment *result)
     double nominal = result->nominal_max_mpa;
     const nw_notch_rule *rule = result->rule;
     if (!isnan(nominal) && !rule->is_table && nominal > 0.8 * yield) {
-        nw_caution_add(out, "net_section_yield", "extremes",
-                       "Nominal stress reaches %.0f MPa, %.2f of the cyclic yield stress (%.0f MPa at "
-                       "0.2 %%): the net section itself yields%s.",
-                       nominal, nominal / yield, yield,
-                       rule->needs_limit_load_ratio || input->plastic_net_section
-                           ? ""
-                           : ", where this notch rule is known to give too little strain");
+        nw_caution_add(
+            out, "net_section_yield", "extremes",
+            "Nominal stress reaches %.0f MPa, %.2f of the cyclic yield stress (%.0f MPa at "
+            "0.2 %%): the net section itself yields%s.",
+            nominal, nominal / yield, yield,
+            rule->needs_limit_load_ratio || input->plastic_net_section
+                ? ""
+                : ", where this notch rule is known to give too little strain");
     }
     if (rule->needs_limit_load_ratio && result->load_max_mpa / input->limit_load_ratio > yield) {
-        nw_caution_add(out, "limit_load", "extremes",
-                       "The load goes past the limit load of the net section (L/Kp = %.0f MPa, cyclic "
-                       "yield stress %.0f MPa).",
-                       result->load_max_mpa / input->limit_load_ratio, yield);
+        nw_caution_add(
+            out, "limit_load", "extremes",
+            "The load goes past the limit load of the net section (L/Kp = %.0f MPa, cyclic "
+            "yield stress %.0f MPa).",
+            result->load_max_mpa / input->limit_load_ratio, yield);
     }
     if (input->loads[0].kind == NW_NOTCH_STRAIN) {
-        nw_caution_add(out, "strain_measured", "extremes",
-                       "Strain was measured at the root, so %s; stress follows from the cyclic curve.",
-                       input->rule_given ? "the notch rule of the case is not used"
-                                         : "no notch rule is used");
+        nw_caution_add(
+            out, "strain_measured", "extremes",
+            "Strain was measured at the root, so %s; stress follows from the cyclic curve.",
+            input->rule_given ? "the notch rule of the case is not used" : "no notch rule is used");
     } else if (!isnan(input->kf)) {
-        nw_caution_add(out, "kf_in_use", "extremes",
-                       "Kf = %.3g replaces Kt in the notch rule: local stress and strain are those of "
-                       "an equivalent notch, not the ones a gauge would show.",
-                       input->kf);
+        nw_caution_add(
+            out, "kf_in_use", "extremes",
+            "Kf = %.3g replaces Kt in the notch rule: local stress and strain are those of "
+            "an equivalent notch, not the ones a gauge would show.",
+            input->kf);
     }
     if (fmax(fabs(result->extremes.strain_max), fabs(result->extremes.strain_min)) > 0.05) {
         nw_caution_add(out, "large_strain", "extremes",
                        "Local strain exceeds 5 %%: small-strain notch rules are formal there.");
     }
     if (result->left_out.loops > 0.0) {
-        nw_caution_add(out, "small_ranges_left_out", "damage_per_block",
-                       "%.0f closed loops a block were left out (ignore_ranges_below); they would have "
-                       "done %.3g damage a block, %.2g of what is counted.",
-                       result->left_out.loops, result->left_out.damage,
-                       result->damage_per_block > 0.0
-                           ? result->left_out.damage / result->damage_per_block
-                           : INFINITY);
+        nw_caution_add(
+            out, "small_ranges_left_out", "damage_per_block",
+            "%.0f closed loops a block were left out (ignore_ranges_below); they would have "
+            "done %.3g damage a block, %.2g of what is counted.",
+            result->left_out.loops, result->left_out.damage,
+            result->damage_per_block > 0.0 ? result->left_out.damage / result->damage_per_block
+                                           : INFINITY);
     }
 }
 
@@ -100,31 +105,34 @@ static void range_cautions(const nw_case *input, const nw_assess_evidence *evide
     const nw_loop_result *worst = result->loop_count > 0 ? &result->loops[0] : NULL;
     if (worst != NULL && isfinite(worst->cycles) &&
         (worst->cycles > m->valid_cycles[1] || worst->cycles < m->valid_cycles[0])) {
-        nw_caution_add(out, "outside_tested_life", "life_blocks",
-                       "The most damaging loop lasts %.3g cycles, outside the range of the tests (%.3g "
-                       "to %.3g cycles): extrapolated.",
-                       worst->cycles, m->valid_cycles[0], m->valid_cycles[1]);
+        nw_caution_add(
+            out, "outside_tested_life", "life_blocks",
+            "The most damaging loop lasts %.3g cycles, outside the range of the tests (%.3g "
+            "to %.3g cycles): extrapolated.",
+            worst->cycles, m->valid_cycles[0], m->valid_cycles[1]);
     }
     if (evidence->rate_max > 2.0) {
-        nw_caution_add(out, "life_below_one_reversal", "life_blocks",
-                       "A loop's life is below one reversal (%.2g cycles): the strain-life curve does "
-                       "not reach there.",
-                       1.0 / evidence->rate_max);
+        nw_caution_add(
+            out, "life_below_one_reversal", "life_blocks",
+            "A loop's life is below one reversal (%.2g cycles): the strain-life curve does "
+            "not reach there.",
+            1.0 / evidence->rate_max);
     }
     bool elastic_mean = strcmp(input->correction->key, "morrow") == 0 ||
                         strcmp(input->correction->key, "manson_halford") == 0;
     if (elastic_mean &&
         evidence->stress_mean_max_mpa >= result->curve.fatigue_strength_coefficient_mpa) {
-        nw_caution_add(out, "mean_stress_at_strength", "life_blocks",
-                       "A loop's mean stress (%.0f MPa) reaches sf' (%.0f MPa): it is taken to fail in "
-                       "its first cycle.",
-                       evidence->stress_mean_max_mpa,
-                       result->curve.fatigue_strength_coefficient_mpa);
+        nw_caution_add(
+            out, "mean_stress_at_strength", "life_blocks",
+            "A loop's mean stress (%.0f MPa) reaches sf' (%.0f MPa): it is taken to fail in "
+            "its first cycle.",
+            evidence->stress_mean_max_mpa, result->curve.fatigue_strength_coefficient_mpa);
     }
     if (evidence->curve_exceeded) {
-        nw_caution_add(out, "notch_curve_extrapolated", "extremes",
-                       "The load goes past the last point of the given notch curve, which is carried on "
-                       "straight.");
+        nw_caution_add(
+            out, "notch_curve_extrapolated", "extremes",
+            "The load goes past the last point of the given notch curve, which is carried on "
+            "straight.");
     }
 }
 
@@ -143,35 +151,39 @@ static void life_cautions(const nw_case *input, nw_assessment *result)
                        "Morrow's correction with sf' is known to fit aluminium alloys badly.");
     }
     if (input->surface_factor != 1.0) {
-        nw_caution_add(out, "surface_factor", "life_blocks",
-                       "Surface factor %.3f on the elastic amplitude at %.3g reversals, none at one "
-                       "reversal: b = %.4f becomes %.4f.",
-                       input->surface_factor, input->surface_reversals,
-                       input->material.fatigue_strength_exponent,
-                       result->curve.fatigue_strength_exponent);
+        nw_caution_add(
+            out, "surface_factor", "life_blocks",
+            "Surface factor %.3f on the elastic amplitude at %.3g reversals, none at one "
+            "reversal: b = %.4f becomes %.4f.",
+            input->surface_factor, input->surface_reversals,
+            input->material.fatigue_strength_exponent, result->curve.fatigue_strength_exponent);
     }
     if (input->below_endurance == NW_HARMLESS) {
-        nw_caution_add(out, "endurance_assumed", "life_blocks",
-                       "Loops below the endurance strain amplitude (%.4g) count as harmless; overloads "
-                       "and corrosion take that limit away.",
-                       input->endurance_strain_amplitude);
+        nw_caution_add(
+            out, "endurance_assumed", "life_blocks",
+            "Loops below the endurance strain amplitude (%.4g) count as harmless; overloads "
+            "and corrosion take that limit away.",
+            input->endurance_strain_amplitude);
     } else if (input->below_endurance == NW_HARMLESS_UNTIL_EXCEEDED) {
-        nw_caution_add(out, "endurance_assumed", "life_blocks",
-                       result->endurance_exceeded
-                           ? "A loop exceeds the endurance strain amplitude (%.4g), so all loops count."
-                           : "No loop exceeds the endurance strain amplitude (%.4g), so none counts.",
-                       input->endurance_strain_amplitude);
+        nw_caution_add(
+            out, "endurance_assumed", "life_blocks",
+            result->endurance_exceeded
+                ? "A loop exceeds the endurance strain amplitude (%.4g), so all loops count."
+                : "No loop exceeds the endurance strain amplitude (%.4g), so none counts.",
+            input->endurance_strain_amplitude);
     }
     if (isinf(result->life_blocks)) {
-        nw_caution_add(out, "no_damage", "life_blocks",
-                       "The repeating block does no damage by this method; that is no proof of endless "
-                       "life.");
+        nw_caution_add(
+            out, "no_damage", "life_blocks",
+            "The repeating block does no damage by this method; that is no proof of endless "
+            "life.");
     }
-    nw_caution_add(out, "scope", "life_blocks",
-                   "Life to a technical crack (about 0.5 to 1 mm) at the notch root. Crack growth, "
-                   "welds, creep and corrosion are not covered. Tests of such parts commonly scatter by "
-                   "a factor of 2 to 3 about a prediction. Applicable codes and the judgement of a "
-                   "qualified engineer come first.");
+    nw_caution_add(
+        out, "scope", "life_blocks",
+        "Life to a technical crack (about 0.5 to 1 mm) at the notch root. Crack growth, "
+        "welds, creep and corrosion are not covered. Tests of such parts commonly scatter by "
+        "a factor of 2 to 3 about a prediction. Applicable codes and the judgement of a "
+        "qualified engineer come first.");
 }
 
 void nw_assess_cautions(const nw_case *input, const nw_assess_evidence *evidence,

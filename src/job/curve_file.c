@@ -80,8 +80,9 @@ static nw_status read_column(const nw_case *input, column *c, nw_diagnostics *di
 nw_status nw_case_curve_file(const nw_case *input, nw_notch_curve **curve,
                              nw_diagnostics *diagnostics)
 {
-    column columns[] = {
-        {"load", NW_STRESS, NULL, 0}, {"stress", NW_STRESS, NULL, 0}, {"strain", NW_STRAIN, NULL, 0}};
+    column columns[] = {{"load", NW_STRESS, NULL, 0},
+                        {"stress", NW_STRESS, NULL, 0},
+                        {"strain", NW_STRAIN, NULL, 0}};
     nw_status status = NW_OK;
     for (int i = 0; i < 3 && status == NW_OK; i++) {
         status = read_column(input, &columns[i], diagnostics);

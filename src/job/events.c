@@ -32,10 +32,11 @@ static nw_status resolve_scale(const nw_load *load, const char *unit, double *sc
     if (nw_unit_factor(unit, dimension, scale)) {
         return NW_OK;
     }
-    return nw_fault(diagnostics, NW_INPUT, &load->place, "load.scale",
-                    "missing for %s, expected the %s per unit of the column (or a header that ends in "
-                    "its unit, as in load[MPa])",
-                    load->label, nw_dimension_name(dimension));
+    return nw_fault(
+        diagnostics, NW_INPUT, &load->place, "load.scale",
+        "missing for %s, expected the %s per unit of the column (or a header that ends in "
+        "its unit, as in load[MPa])",
+        load->label, nw_dimension_name(dimension));
 }
 
 static nw_status start_finder(const nw_case *input, const nw_load *load, const char *unit,
@@ -54,11 +55,11 @@ static nw_status stream_file(const nw_case *input, const nw_load *load, nw_histo
                              nw_event *event, nw_diagnostics *diagnostics)
 {
     nw_turning_finder finder;
-    nw_status status =
-        start_finder(input, load, nw_history_unit(history), &finder, diagnostics);
+    nw_status status = start_finder(input, load, nw_history_unit(history), &finder, diagnostics);
     double *values = malloc(BATCH * sizeof *values);
     if (values == NULL) {
-        return nw_fault(diagnostics, NW_MEMORY, NULL, NULL, "out of memory reading %s", load->label);
+        return nw_fault(diagnostics, NW_MEMORY, NULL, NULL, "out of memory reading %s",
+                        load->label);
     }
     size_t count = 1;
     while (status == NW_OK && count > 0) {
@@ -96,7 +97,8 @@ static nw_status read_inline(const nw_case *input, const nw_load *load, nw_event
     if (status == NW_OK) {
         status = nw_event_finish(event, &finder);
     }
-    return status == NW_MEMORY ? nw_fault(diagnostics, status, NULL, NULL, "out of memory") : status;
+    return status == NW_MEMORY ? nw_fault(diagnostics, status, NULL, NULL, "out of memory")
+                               : status;
 }
 
 static nw_status check_finite(const nw_load *load, const nw_event *event,

@@ -72,7 +72,8 @@ static int by_damage(const void *left, const void *right)
     const nw_counted_loop *a = left, *b = right;
     double keys[3][2] = {
         {a->rate * a->count, b->rate * b->count},
-        {load_max_of(&a->loop) - load_min_of(&a->loop), load_max_of(&b->loop) - load_min_of(&b->loop)},
+        {load_max_of(&a->loop) - load_min_of(&a->loop),
+         load_max_of(&b->loop) - load_min_of(&b->loop)},
         {load_max_of(&a->loop), load_max_of(&b->loop)},
     };
     for (int i = 0; i < 3; i++) {

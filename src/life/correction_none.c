@@ -23,8 +23,9 @@ const nw_correction nw_correction_none = {
     .key = "none",
     .title = "None",
     .equation = "ea = (sf'/E)(2N)^b + ef'(2N)^c",
-    .reference = "Basquin, Proc. ASTM 10 (1910); Manson, NACA TN 2933 (1953); Coffin, Trans. ASME 76 "
-                 "(1954)",
+    .reference =
+        "Basquin, Proc. ASTM 10 (1910); Manson, NACA TN 2933 (1953); Coffin, Trans. ASME 76 "
+        "(1954)",
     .terms = nw_strain_terms,
     .prepare = prepare,
 };

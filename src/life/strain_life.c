@@ -14,10 +14,8 @@ nw_strain_life nw_strain_life_of(const nw_material *material, double surface_fac
                                  double surface_reversals)
 {
     nw_strain_life curve = {
-        material->youngs_modulus_mpa,
-        material->fatigue_strength_coefficient_mpa,
-        material->fatigue_strength_exponent,
-        material->fatigue_ductility_coefficient,
+        material->youngs_modulus_mpa,         material->fatigue_strength_coefficient_mpa,
+        material->fatigue_strength_exponent,  material->fatigue_ductility_coefficient,
         material->fatigue_ductility_exponent,
     };
     if (surface_factor != 1.0) {

@@ -36,10 +36,11 @@ static bool applies(const nw_estimate_input *input, char *why, size_t capacity)
         return false;
     }
     if (input->group == NW_STEEL && ductility_factor(input) <= 0.0) {
-        snprintf(why, capacity,
-                 "its ductility factor 1.375 - 125 Su/E is not positive at Su/E = %.4f (needs below "
-                 "0.011)",
-                 input->ultimate_strength_mpa / input->youngs_modulus_mpa);
+        snprintf(
+            why, capacity,
+            "its ductility factor 1.375 - 125 Su/E is not positive at Su/E = %.4f (needs below "
+            "0.011)",
+            input->ultimate_strength_mpa / input->youngs_modulus_mpa);
         return false;
     }
     return true;

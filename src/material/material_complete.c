@@ -17,8 +17,9 @@ static nw_status fill_from_estimate(nw_material *m, const nw_estimate *estimate,
     nw_estimate_input input = {m->group, m->ultimate_strength_mpa, m->youngs_modulus_mpa};
     char why[300];
     if (!estimate->applies(&input, why, sizeof why)) {
-        nw_field_fault(reader, map, path, "", "no strain_life, and the estimate %s does not apply: %s",
-                       estimate->key, why);
+        nw_field_fault(reader, map, path, "",
+                       "no strain_life, and the estimate %s does not apply: %s", estimate->key,
+                       why);
         return NW_INPUT;
     }
     nw_estimate_values values;

@@ -7,8 +7,8 @@
 #include <math.h>
 #include <string.h>
 
-static const char *const group_words[] = {"steel",     "cast_steel", "aluminium", "titanium",
-                                          "nickel",    "cast_iron",  "other",     NULL};
+static const char *const group_words[] = {"steel",  "cast_steel", "aluminium", "titanium",
+                                          "nickel", "cast_iron",  "other",     NULL};
 static const char *const basis_words[] = {"tested", "handbook", "estimated", NULL};
 static const char *const origin_words[] = {"given", "compatibility", "estimate"};
 
@@ -46,8 +46,8 @@ static const nw_field top_rows[] = {
     {.key = "note", .kind = NW_FIELD_TEXT, .offset = TOP(material.note), .size = 480},
     {.key = "units", .kind = NW_FIELD_OTHER},
     {.key = "estimate", .kind = NW_FIELD_OTHER},
-    {"youngs_modulus", NW_FIELD_QUANTITY, NW_STRESS, TOP(material.youngs_modulus_mpa), 0, true,
-     1e3, 1e6, false, false, NULL},
+    {"youngs_modulus", NW_FIELD_QUANTITY, NW_STRESS, TOP(material.youngs_modulus_mpa), 0, true, 1e3,
+     1e6, false, false, NULL},
     {"poisson_ratio", NW_FIELD_QUANTITY, NW_PURE, TOP(material.poisson_ratio), 0, false, 0.0, 0.5,
      true, true, NULL},
     {"yield_strength", NW_FIELD_QUANTITY, NW_STRESS, TOP(material.yield_strength_mpa), 0, false,
@@ -143,12 +143,13 @@ static void read_sections(nw_field_reader *reader, const nw_node *map, const cha
 
 static void require_file_keys(nw_field_reader *reader, const nw_node *map)
 {
-    static const char *const required[] = {"notchwright_material", "name", "group",
-                                           "basis",                "source"};
+    static const char *const required[] = {"notchwright_material", "name", "group", "basis",
+                                           "source"};
     for (size_t i = 0; i < sizeof required / sizeof required[0]; i++) {
         if (nw_node_entry(map, required[i]) == NULL) {
-            nw_field_fault(reader, map, "", required[i], "missing, expected this key in every "
-                                                         "material file");
+            nw_field_fault(reader, map, "", required[i],
+                           "missing, expected this key in every "
+                           "material file");
         }
     }
 }

@@ -20,9 +20,7 @@ static const char *folder_at(size_t index, char *buffer, size_t capacity)
         }
         list += length + (list[length] == ':');
     }
-    return index == 0   ? NW_INSTALLED_MATERIALS
-           : index == 1 ? NW_SOURCE_MATERIALS
-                        : NULL;
+    return index == 0 ? NW_INSTALLED_MATERIALS : index == 1 ? NW_SOURCE_MATERIALS : NULL;
 }
 
 static bool is_plain_name(const char *name)

@@ -94,21 +94,18 @@ nw_status nw_notch_rule_solve(const nw_notch_rule *rule, const nw_rule_input *in
 static double elastic_load(const nw_rule_input *input, double load_max)
 {
     double n = input->hardening_exponent;
-    double log_ratio = log(negligible_plastic_ratio * input->strength_coefficient_mpa /
-                           input->youngs_modulus_mpa);
+    double log_ratio =
+        log(negligible_plastic_ratio * input->strength_coefficient_mpa / input->youngs_modulus_mpa);
     double load = input->strength_coefficient_mpa * exp(log_ratio * n / (1.0 - n));
     double least = load_max * 0x1p-60, most = load_max * 0.5;
     return load < least ? least : load > most ? most : load;
 }
 
-/* The first bin stands for every smaller load. */
+/* The first bin stands for every smaller load: both ratios are 1 there. */
 static void make_first_bin_elastic(nw_bin_table *bins)
 {
-    for (unsigned f = 0; f < 2; f++) {
-        double *c = bins->coefficients + f * NW_BIN_COEFFICIENTS;
-        memset(c, 0, NW_BIN_COEFFICIENTS * sizeof *c);
-        c[0] = 1.0;
-    }
+    memset(bins->coefficients, 0, 2 * NW_BIN_COEFFICIENTS * sizeof *bins->coefficients);
+    bins->coefficients[0] = bins->coefficients[1] = 1.0;
 }
 
 static nw_notch_curve *new_curve(double load_max, double compliance)
@@ -130,7 +127,8 @@ nw_status nw_notch_curve_build(const nw_notch_rule *rule, const nw_rule_input *i
     nw_notch_curve *made = new_curve(load_max_mpa, 1.0 / input->youngs_modulus_mpa);
     if (made == NULL || nw_pair_solver_create(&p.solver) != NW_OK) {
         free(made);
-        return nw_fault(diagnostics, NW_MEMORY, NULL, NULL, "out of memory building the notch curve");
+        return nw_fault(diagnostics, NW_MEMORY, NULL, NULL,
+                        "out of memory building the notch curve");
     }
     p.guess[0] = start_of(input, load_max_mpa);
     p.guess[1] = -p.guess[0];
@@ -217,12 +215,12 @@ void nw_notch_curve_at_table(const nw_notch_curve *curve, double load, double *s
 void nw_notch_curve_at(const nw_notch_curve *curve, double load_mpa, double *stress_mpa,
                        double *strain)
 {
-    double stress = 0.0, size = 0.0;
+    nw_pair size = {0.0, 0.0};
     if (load_mpa != 0.0) {
-        nw_notch_curve_positive(curve, fabs(load_mpa), &stress, &size);
+        size = nw_notch_curve_positive(curve, fabs(load_mpa));
     }
-    *stress_mpa = copysign(stress, load_mpa);
-    *strain = copysign(size, load_mpa);
+    *stress_mpa = copysign(size[0], load_mpa);
+    *strain = copysign(size[1], load_mpa);
 }
 
 double nw_notch_curve_load_max_mpa(const nw_notch_curve *curve)

@@ -17,20 +17,26 @@ struct nw_notch_curve {
 void nw_notch_curve_at_table(const nw_notch_curve *curve, double load, double *stress,
                              double *strain);
 
-/* Stress and strain at load >= 0. */
-static inline void nw_notch_curve_positive(const nw_notch_curve *curve, double load, double *stress,
-                                           double *strain)
+/* {stress, strain} at load >= 0 of a curve made of bins. */
+static inline nw_pair nw_notch_curve_in_bins(const nw_bin_table *bins, double compliance,
+                                             double load)
 {
-    if (curve->points > 0) {
-        nw_notch_curve_at_table(curve, load, stress, strain);
-        return;
-    }
-    int64_t bin = (int64_t)nw_bin_of(&curve->bins, load);
+    int64_t bin = (int64_t)nw_bin_of(bins, load);
     bin = bin < 0 ? 0 : bin;
-    double t = nw_bin_position(&curve->bins, load);
-    const double *c = curve->bins.coefficients + bin * 2 * NW_BIN_COEFFICIENTS;
-    *stress = load * nw_bin_polynomial(c, t);
-    *strain = load * curve->compliance * nw_bin_polynomial(c + NW_BIN_COEFFICIENTS, t);
+    nw_pair scale = {load, load * compliance};
+    return scale * nw_bin_polynomial_pair(bins->coefficients + bin * 2 * NW_BIN_COEFFICIENTS,
+                                          nw_bin_position(bins, load));
+}
+
+/* {stress, strain} at load >= 0. */
+static inline nw_pair nw_notch_curve_positive(const nw_notch_curve *curve, double load)
+{
+    if (curve->points == 0) {
+        return nw_notch_curve_in_bins(&curve->bins, curve->compliance, load);
+    }
+    double stress, strain;
+    nw_notch_curve_at_table(curve, load, &stress, &strain);
+    return (nw_pair){stress, strain};
 }
 
 #endif

@@ -16,10 +16,11 @@ static void put_number(FILE *to, double value)
 nw_status nw_write_assessment_csv(FILE *to, const nw_case *input, const nw_assessment *result)
 {
     (void)input;
-    fputs("count,load_max_mpa,load_min_mpa,strain_amplitude,strain_mean,stress_max_mpa,"
-          "stress_min_mpa,stress_mean_mpa,cycles_to_initiation,damage,share,start_event,start_sample,"
-          "tip_event,tip_sample\n",
-          to);
+    fputs(
+        "count,load_max_mpa,load_min_mpa,strain_amplitude,strain_mean,stress_max_mpa,"
+        "stress_min_mpa,stress_mean_mpa,cycles_to_initiation,damage,share,start_event,start_sample,"
+        "tip_event,tip_sample\n",
+        to);
     for (size_t i = 0; i < result->loop_count; i++) {
         const nw_loop_result *loop = &result->loops[i];
         const nw_loop_values *v = &loop->values;

@@ -26,10 +26,9 @@ static json_t *pair(const double *values)
 static json_t *material_object(const nw_case *input, const nw_assessment *result)
 {
     const nw_material *m = &input->material;
-    json_t *object =
-        json_pack("{s:o, s:s, s:s, s:o, s:o}", "name", nw_json_text(m->name), "group",
-                  nw_group_name(m->group), "basis", nw_basis_name(m->basis), "source",
-                  nw_json_text(m->source), "estimate", nw_json_text(m->estimate));
+    json_t *object = json_pack("{s:o, s:s, s:s, s:o, s:o}", "name", nw_json_text(m->name), "group",
+                               nw_group_name(m->group), "basis", nw_basis_name(m->basis), "source",
+                               nw_json_text(m->source), "estimate", nw_json_text(m->estimate));
     if (object == NULL) {
         return NULL;
     }
@@ -63,7 +62,8 @@ static json_t *material_object(const nw_case *input, const nw_assessment *result
     failed |= json_object_set_new(object, "hardening_exponent_from",
                                   json_string(nw_origin_name(m->hardening_exponent_origin)));
     failed |= json_object_set_new(object, "valid_cycles", pair(m->valid_cycles));
-    failed |= json_object_set_new(object, "valid_strain_amplitude", pair(m->valid_strain_amplitude));
+    failed |=
+        json_object_set_new(object, "valid_strain_amplitude", pair(m->valid_strain_amplitude));
     if (failed) {
         json_decref(object);
         return NULL;
@@ -73,12 +73,12 @@ static json_t *material_object(const nw_case *input, const nw_assessment *result
 
 static json_t *notch_object(const nw_case *input, const nw_assessment *result)
 {
-    return json_pack("{s:o, s:o, s:o, s:o, s:f, s:s, s:o, s:f}", "kt", nw_json_number(input->kt), "kf",
-                     nw_json_number(input->kf), "factor_used", nw_json_number(input->factor),
-                     "limit_load_ratio", nw_json_number(input->limit_load_ratio),
-                     "residual_stress_mpa", input->residual_stress_mpa, "constraint", "plane_stress",
-                     "nominal_stress_max_mpa", nw_json_number(result->nominal_max_mpa),
-                     "curve_error", result->notch_curve_error);
+    return json_pack(
+        "{s:o, s:o, s:o, s:o, s:f, s:s, s:o, s:f}", "kt", nw_json_number(input->kt), "kf",
+        nw_json_number(input->kf), "factor_used", nw_json_number(input->factor), "limit_load_ratio",
+        nw_json_number(input->limit_load_ratio), "residual_stress_mpa", input->residual_stress_mpa,
+        "constraint", "plane_stress", "nominal_stress_max_mpa",
+        nw_json_number(result->nominal_max_mpa), "curve_error", result->notch_curve_error);
 }
 
 static json_t *events_array(const nw_case *input)
@@ -86,11 +86,10 @@ static json_t *events_array(const nw_case *input)
     json_t *list = json_array();
     for (size_t i = 0; list != NULL && i < input->load_count; i++) {
         const nw_load *load = &input->loads[i];
-        json_t *item = json_pack("{s:o, s:o, s:s, s:o, s:f}", "history", nw_json_text(load->label),
-                                 "column", nw_json_text(load->column), "as",
-                                 nw_load_kind_name(load->kind), "repeats",
-                                 nw_json_count(load->repeats), "ignore_ranges_below",
-                                 load->ignore_ranges_below_mpa);
+        json_t *item = json_pack(
+            "{s:o, s:o, s:s, s:o, s:f}", "history", nw_json_text(load->label), "column",
+            nw_json_text(load->column), "as", nw_load_kind_name(load->kind), "repeats",
+            nw_json_count(load->repeats), "ignore_ranges_below", load->ignore_ranges_below_mpa);
         if (item == NULL || json_array_append_new(list, item) != 0) {
             json_decref(list);
             return NULL;
@@ -111,22 +110,22 @@ static json_t *block_object(const nw_case *input, const nw_assessment *result)
 static json_t *head_object(const nw_case *input, const nw_assessment *result)
 {
     const nw_extremes *e = &result->extremes;
-    json_t *target = result->has_target
-                         ? json_pack("{s:f, s:b}", "blocks", input->target_blocks, "reached",
-                                     (int)result->target_reached)
-                         : json_null();
-    return json_pack(
-        "{s:s, s:s, s:o, s:o, s:o, s:o, s:o, s:{s:f, s:f, s:f, s:f}, s:f, s:f, s:o, s:o, s:{s:o, s:f}, "
-        "s:o}",
-        "format", "notchwright.assessment/1", "version", nw_version(), "title",
-        nw_json_text(input->title), "method", method_object(input, result), "material",
-        material_object(input, result), "notch", notch_object(input, result), "block",
-        block_object(input, result), "extremes", "stress_max_mpa", e->stress_max_mpa,
-        "stress_min_mpa", e->stress_min_mpa, "strain_max", e->strain_max, "strain_min",
-        e->strain_min, "damage_first_block", result->damage_first_block, "damage_per_block",
-        result->damage_per_block, "life_blocks", nw_json_number(result->life_blocks), "target",
-        target, "left_out", "loops", nw_json_count(result->left_out.loops), "damage",
-        result->left_out.damage, "loops_total", nw_json_count(result->loops_total));
+    json_t *target = result->has_target ? json_pack("{s:f, s:b}", "blocks", input->target_blocks,
+                                                    "reached", (int)result->target_reached)
+                                        : json_null();
+    return json_pack("{s:s, s:s, s:o, s:o, s:o, s:o, s:o, s:{s:f, s:f, s:f, s:f}, s:f, s:f, s:o, "
+                     "s:o, s:{s:o, s:f}, "
+                     "s:o}",
+                     "format", "notchwright.assessment/1", "version", nw_version(), "title",
+                     nw_json_text(input->title), "method", method_object(input, result), "material",
+                     material_object(input, result), "notch", notch_object(input, result), "block",
+                     block_object(input, result), "extremes", "stress_max_mpa", e->stress_max_mpa,
+                     "stress_min_mpa", e->stress_min_mpa, "strain_max", e->strain_max, "strain_min",
+                     e->strain_min, "damage_first_block", result->damage_first_block,
+                     "damage_per_block", result->damage_per_block, "life_blocks",
+                     nw_json_number(result->life_blocks), "target", target, "left_out", "loops",
+                     nw_json_count(result->left_out.loops), "damage", result->left_out.damage,
+                     "loops_total", nw_json_count(result->loops_total));
 }
 
 static json_t *place_object(const nw_case *input, nw_history_place place)

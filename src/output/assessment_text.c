@@ -57,8 +57,8 @@ static void write_verdict(FILE *to, const nw_case *input, const nw_assessment *r
     }
     const char *verdict = result->target_reached ? "TARGET REACHED" : "TARGET MISSED";
     const char *on = !colour ? "" : result->target_reached ? "\033[1;32m" : "\033[1;31m";
-    fprintf(to, "%s%s%s  %s against a target of %s", on, verdict, colour ? "\033[0m" : "", line,
-            nw_page_rounded(input->target_blocks, 6, life, sizeof life));
+    fprintf(to, "%s%s%s  %s against a target of %.7g", on, verdict, colour ? "\033[0m" : "", line,
+            input->target_blocks);
     if (isfinite(result->life_blocks)) {
         fprintf(to, ", %s times the target",
                 nw_page_rounded(result->life_blocks / input->target_blocks, digits, ratio,
@@ -70,12 +70,13 @@ static void write_verdict(FILE *to, const nw_case *input, const nw_assessment *r
 static void write_basis(FILE *to, const nw_case *input, const nw_assessment *result)
 {
     char line[LINE];
-    snprintf(line, sizeof line,
-             "rule %s; mean stress %s; material %s, %s; %g %% survival%s; failure at damage sum %g.",
-             result->rule->title, input->correction->title,
-             input->material.name[0] == '\0' ? "inline" : input->material.name, basis_words(input),
-             100.0 * input->survival, input->survival == 0.5 ? " (median curve)" : "",
-             input->damage_sum);
+    snprintf(
+        line, sizeof line,
+        "rule %s; mean stress %s; material %s, %s; %g %% survival%s; failure at damage sum %g.",
+        result->rule->title, input->correction->title,
+        input->material.name[0] == '\0' ? "inline" : input->material.name, basis_words(input),
+        100.0 * input->survival, input->survival == 0.5 ? " (median curve)" : "",
+        input->damage_sum);
     nw_page_paragraph(to, "  by ", line);
 }
 
@@ -94,8 +95,8 @@ static void write_load(FILE *to, const nw_case *input, const nw_assessment *resu
     fprintf(to, "Block    %zu event%s, %.0f samples, %.0f reversals, %.0f closed loops a block\n",
             input->load_count, input->load_count == 1 ? "" : "s", result->samples,
             result->turning_points, result->loops_total);
-    fprintf(to, "Load     notch stress if all were elastic: %.1f to %.1f MPa",
-            result->load_min_mpa, result->load_max_mpa);
+    fprintf(to, "Load     notch stress if all were elastic: %.1f to %.1f MPa", result->load_min_mpa,
+            result->load_max_mpa);
     if (!isnan(result->nominal_max_mpa)) {
         fprintf(to, " (%s = %.3g, nominal up to %.1f MPa)", isnan(input->kf) ? "Kt" : "Kf",
                 input->factor, result->nominal_max_mpa);
@@ -180,7 +181,8 @@ nw_status nw_write_assessment_text(FILE *to, const nw_case *input, const nw_asse
     nw_page_paragraph(to, "    ", result->rule->reference);
     nw_page_paragraph(to, "  mean stress: ", input->correction->equation);
     nw_page_paragraph(to, "    ", input->correction->reference);
-    nw_page_paragraph(to, "  memory: ",
-                      "Masing branches, loops closed as in Clormann & Seeger, Stahlbau 55 (1986) 65");
+    nw_page_paragraph(
+        to, "  memory: ",
+        "Masing branches, loops closed as in Clormann & Seeger, Stahlbau 55 (1986) 65");
     return ferror(to) ? NW_FILE : NW_OK;
 }

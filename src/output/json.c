@@ -32,7 +32,8 @@ json_t *nw_json_cautions(const nw_cautions *cautions)
     json_t *list = json_array();
     for (size_t i = 0; list != NULL && i < cautions->count; i++) {
         const nw_caution *c = &cautions->items[i];
-        json_t *item = json_pack("{s:s, s:s, s:s}", "code", c->code, "about", c->about, "text", c->text);
+        json_t *item =
+            json_pack("{s:s, s:s, s:s}", "code", c->code, "about", c->about, "text", c->text);
         if (item == NULL || json_array_append_new(list, item) != 0) {
             json_decref(list);
             return NULL;

@@ -1,8 +1,8 @@
 #include "output/page.h"
 
 #include <math.h>
-#include <stdlib.h>
 #include <stdbool.h>
+#include <stdlib.h>
 #include <string.h>
 
 /* Characters shown, not bytes: UTF-8 continuation bytes take no room. */

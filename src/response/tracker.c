@@ -4,8 +4,9 @@
 
 #include <math.h>
 #include <stdlib.h>
+#include <string.h>
 
-enum { LOOP_BUFFER = 256, FIRST_CAPACITY = 256 };
+enum { LOOP_BUFFER = 256, CHUNK = 4096, FIRST_CAPACITY = 256 };
 
 /* stack[1] is the last point on the initial curve, stack[0].load its mirror image: a branch that passes
  * it is on the initial curve again (M3). stack[i] starts the branch that ends in stack[i + 1]; the last
@@ -51,8 +52,7 @@ nw_status nw_tracker_create(const nw_notch_curve *curve, double start_load_mpa, 
     made->stack[1] = on_initial_curve(curve, start_load_mpa, UINT64_MAX);
     made->stack[0] = (nw_local_point){.load_mpa = -start_load_mpa};
     made->top = 1;
-    made->extremes =
-        (nw_extremes){-INFINITY, INFINITY, -INFINITY, INFINITY, -INFINITY, INFINITY};
+    made->extremes = (nw_extremes){-INFINITY, INFINITY, -INFINITY, INFINITY, -INFINITY, INFINITY};
     *tracker = made;
     return NW_OK;
 }
@@ -65,26 +65,6 @@ void nw_tracker_free(nw_tracker *tracker)
     }
 }
 
-nw_status nw_tracker_flush(nw_tracker *tracker)
-{
-    size_t count = tracker->waiting;
-    tracker->waiting = 0;
-    return count == 0 ? NW_OK
-                      : tracker->sink(tracker->sink_data, tracker->loops, count, tracker->weight);
-}
-
-static nw_status grow(nw_tracker *tracker)
-{
-    size_t capacity = tracker->capacity + tracker->capacity / 2;
-    nw_local_point *stack = realloc(tracker->stack, capacity * sizeof *stack);
-    if (stack == NULL) {
-        return NW_MEMORY;
-    }
-    tracker->stack = stack;
-    tracker->capacity = capacity;
-    return NW_OK;
-}
-
 static inline double larger(double a, double b)
 {
     return a > b ? a : b;
@@ -95,56 +75,130 @@ static inline double smaller(double a, double b)
     return a < b ? a : b;
 }
 
-static inline void widen(nw_extremes *extremes, const nw_local_point *point)
+/* Every point met ends in a closed loop, on the initial curve or in the stack, so extremes need not be
+ * looked after at each move. */
+static void widen_by_loops(nw_extremes *extremes, const nw_loop *loops, size_t count)
 {
-    extremes->stress_max_mpa = larger(extremes->stress_max_mpa, point->stress_mpa);
-    extremes->stress_min_mpa = smaller(extremes->stress_min_mpa, point->stress_mpa);
-    extremes->strain_max = larger(extremes->strain_max, point->strain);
-    extremes->strain_min = smaller(extremes->strain_min, point->strain);
-    extremes->load_max_mpa = larger(extremes->load_max_mpa, point->load_mpa);
-    extremes->load_min_mpa = smaller(extremes->load_min_mpa, point->load_mpa);
+    nw_extremes e = *extremes;
+    for (size_t i = 0; i < count; i++) {
+        const nw_local_point *a = &loops[i].start, *b = &loops[i].tip;
+        e.stress_max_mpa = larger(e.stress_max_mpa, larger(a->stress_mpa, b->stress_mpa));
+        e.stress_min_mpa = smaller(e.stress_min_mpa, smaller(a->stress_mpa, b->stress_mpa));
+        e.strain_max = larger(e.strain_max, larger(a->strain, b->strain));
+        e.strain_min = smaller(e.strain_min, smaller(a->strain, b->strain));
+        e.load_max_mpa = larger(e.load_max_mpa, larger(a->load_mpa, b->load_mpa));
+        e.load_min_mpa = smaller(e.load_min_mpa, smaller(a->load_mpa, b->load_mpa));
+    }
+    *extremes = e;
 }
 
-/* Goes from the last point of the stack to `load`, in direction +1 or -1: closes what closes on the way
- * and puts the point reached on the stack. */
-static inline nw_status advance(nw_tracker *tracker, double load, double direction, uint64_t id)
+nw_status nw_tracker_flush(nw_tracker *tracker)
 {
-    nw_local_point *top = tracker->stack + tracker->top;
-    bool initial = false;
-    while (direction * (load - top[-1].load_mpa) >= 0.0) {
-        if (top == tracker->stack + 1) { /* M3, unless just at the mirror image */
-            initial = fabs(load) > fabs(top->load_mpa);
+    size_t count = tracker->waiting;
+    tracker->waiting = 0;
+    widen_by_loops(&tracker->extremes, tracker->loops, count);
+    return count == 0 ? NW_OK
+                      : tracker->sink(tracker->sink_data, tracker->loops, count, tracker->weight);
+}
+
+static void widen(nw_extremes *extremes, const nw_local_point *point)
+{
+    extremes->stress_max_mpa = fmax(extremes->stress_max_mpa, point->stress_mpa);
+    extremes->stress_min_mpa = fmin(extremes->stress_min_mpa, point->stress_mpa);
+    extremes->strain_max = fmax(extremes->strain_max, point->strain);
+    extremes->strain_min = fmin(extremes->strain_min, point->strain);
+    extremes->load_max_mpa = fmax(extremes->load_max_mpa, point->load_mpa);
+    extremes->load_min_mpa = fmin(extremes->load_min_mpa, point->load_mpa);
+}
+
+static void go_on_initial(nw_tracker *tracker, double load, uint64_t id)
+{
+    tracker->stack[1] = on_initial_curve(tracker->curve, load, id);
+    tracker->stack[0].load_mpa = -load;
+    tracker->top = 1;
+    widen(&tracker->extremes, &tracker->stack[1]);
+}
+
+/* From the last point of the stack to `load`: closes what closes on the way and puts the point reached on
+ * the stack, for which there must be room. `rising` and `in_bins` are constants where this is inlined: the
+ * comparison then is one instruction, and the curve is looked up without asking what kind it is. */
+static inline __attribute__((always_inline)) nw_status
+advance(nw_tracker *tracker, double load, uint64_t id, bool rising, bool in_bins)
+{
+    nw_local_point *const base = tracker->stack;
+    nw_local_point *top = base + tracker->top;
+    while (rising ? load >= top[-1].load_mpa : load <= top[-1].load_mpa) {
+        if (top == base + 1) { /* M3, unless just at the mirror image */
+            if (fabs(load) > fabs(top->load_mpa)) {
+                go_on_initial(tracker, load, id);
+                return NW_OK;
+            }
             break;
         }
         tracker->loops[tracker->waiting++] = (nw_loop){top[-1], top[0]};
         top -= 2;
         if (tracker->waiting == LOOP_BUFFER) {
-            tracker->top = (size_t)(top - tracker->stack);
             nw_status status = nw_tracker_flush(tracker);
             if (status != NW_OK) {
                 return status;
             }
         }
-        if (top == tracker->stack) { /* M1; otherwise M2: the branch from `top` goes on */
-            initial = true;
-            break;
+        if (top == base) { /* M1; otherwise M2: the branch from `top` goes on */
+            go_on_initial(tracker, load, id);
+            return NW_OK;
         }
     }
-    if (initial) {
-        tracker->stack[1] = on_initial_curve(tracker->curve, load, id);
-        tracker->stack[0].load_mpa = -load;
-        tracker->top = 1;
-        widen(&tracker->extremes, &tracker->stack[1]);
+    double half_range = rising ? 0.5 * (load - top->load_mpa) : 0.5 * (top->load_mpa - load);
+    nw_pair half = in_bins ? nw_notch_curve_in_bins(&tracker->curve->bins,
+                                                    tracker->curve->compliance, half_range)
+                           : nw_notch_curve_positive(tracker->curve, half_range);
+    nw_pair from = nw_pair_load(&top->stress_mpa);
+    nw_pair reached = rising ? from + 2.0 * half : from - 2.0 * half;
+    top[1].load_mpa = load;
+    memcpy(&top[1].stress_mpa, &reached, sizeof reached);
+    top[1].id = id;
+    tracker->top = (size_t)(top - base) + 1;
+    return NW_OK;
+}
+
+static nw_status make_room(nw_tracker *tracker, size_t more)
+{
+    size_t needed = tracker->top + more + 2;
+    if (needed <= tracker->capacity) {
         return NW_OK;
     }
-    double stress, strain, half_range = 0.5 * direction * (load - top->load_mpa);
-    nw_notch_curve_positive(tracker->curve, half_range, &stress, &strain);
-    double doubled = 2.0 * direction;
-    top[1] = (nw_local_point){load, top->stress_mpa + doubled * stress,
-                              top->strain + doubled * strain, id};
-    widen(&tracker->extremes, &top[1]);
-    tracker->top = (size_t)(top - tracker->stack) + 1;
-    return tracker->top + 2 < tracker->capacity ? NW_OK : grow(tracker);
+    size_t capacity = needed + tracker->capacity / 2;
+    nw_local_point *stack = realloc(tracker->stack, capacity * sizeof *stack);
+    if (stack == NULL) {
+        return NW_MEMORY;
+    }
+    tracker->stack = stack;
+    tracker->capacity = capacity;
+    return NW_OK;
+}
+
+/* Points that turn each time; the first one goes up when `rising`. */
+static inline __attribute__((always_inline)) nw_status advance_all(nw_tracker *tracker,
+                                                                   const nw_turning_point *points,
+                                                                   size_t count, uint64_t first_id,
+                                                                   bool rising, bool in_bins)
+{
+    size_t i = 0;
+    nw_status status = NW_OK;
+    if (!rising && count > 0) {
+        status = advance(tracker, points[0].load_mpa, first_id, false, in_bins);
+        i = 1;
+    }
+    for (; i + 1 < count && status == NW_OK; i += 2) {
+        status = advance(tracker, points[i].load_mpa, first_id + i, true, in_bins);
+        if (status == NW_OK) {
+            status = advance(tracker, points[i + 1].load_mpa, first_id + i + 1, false, in_bins);
+        }
+    }
+    if (i < count && status == NW_OK) {
+        status = advance(tracker, points[i].load_mpa, first_id + i, true, in_bins);
+    }
+    return status;
 }
 
 /* The part stays on the initial curve when it moves on away from zero. */
@@ -161,16 +215,22 @@ nw_status nw_tracker_move(nw_tracker *tracker, double load_mpa, uint64_t id)
         widen(&tracker->extremes, now);
         return NW_OK;
     }
-    double direction = load_mpa > now->load_mpa ? 1.0 : -1.0;
+    bool rising = load_mpa > now->load_mpa;
     if (stays_on_initial(tracker, load_mpa)) {
-        tracker->stack[1] = on_initial_curve(tracker->curve, load_mpa, id);
-        tracker->stack[0].load_mpa = -load_mpa;
-        widen(&tracker->extremes, &tracker->stack[1]);
+        go_on_initial(tracker, load_mpa, id);
         return NW_OK;
     }
-    bool goes_on = tracker->top > 1 && direction * (now->load_mpa - now[-1].load_mpa) > 0.0;
+    bool goes_on = tracker->top > 1 && rising == (now->load_mpa > now[-1].load_mpa);
     tracker->top -= goes_on;
-    return advance(tracker, load_mpa, direction, id);
+    nw_status status = make_room(tracker, 1);
+    if (status != NW_OK) {
+        return status;
+    }
+    status = rising ? advance(tracker, load_mpa, id, true, false)
+                    : advance(tracker, load_mpa, id, false, false);
+    /* The load may go on from here, and then this point is in no loop. */
+    widen(&tracker->extremes, &tracker->stack[tracker->top]);
+    return status;
 }
 
 nw_status nw_tracker_pass(nw_tracker *tracker, const nw_event *event, uint64_t first_id,
@@ -184,18 +244,30 @@ nw_status nw_tracker_pass(nw_tracker *tracker, const nw_event *event, uint64_t f
     for (; i < event->count && i < 2 && status == NW_OK; i++) {
         status = nw_tracker_move(tracker, points[i].load_mpa, first_id + i);
     }
-    if (i < event->count) {
-        double direction = points[i].load_mpa > points[i - 1].load_mpa ? 1.0 : -1.0;
-        for (; i < event->count && status == NW_OK; i++, direction = -direction) {
-            status = advance(tracker, points[i].load_mpa, direction, first_id + i);
+    bool in_bins = tracker->curve->points == 0;
+    while (i < event->count && status == NW_OK) {
+        size_t size = event->count - i < CHUNK ? event->count - i : CHUNK;
+        bool rising = points[i].load_mpa > points[i - 1].load_mpa;
+        status = make_room(tracker, size);
+        if (status == NW_OK) {
+            status = in_bins ? advance_all(tracker, points + i, size, first_id + i, rising, true)
+                             : advance_all(tracker, points + i, size, first_id + i, rising, false);
         }
+        i += size;
     }
     return status == NW_OK ? nw_tracker_flush(tracker) : status;
 }
 
+/* Points still open are not in any closed loop yet. */
 nw_extremes nw_tracker_extremes(const nw_tracker *tracker)
 {
-    return tracker->extremes;
+    nw_extremes extremes = tracker->extremes;
+    for (size_t i = 1; i <= tracker->top; i++) {
+        if (tracker->stack[i].id != UINT64_MAX) {
+            widen(&extremes, &tracker->stack[i]);
+        }
+    }
+    return extremes;
 }
 
 nw_local_point nw_tracker_now(const nw_tracker *tracker)

@@ -47,8 +47,11 @@ def random_material(rng):
         material["cyclic_curve"] = {
             "strength_coefficient": stress_text(rng, ultimate * rng.uniform(1.1, 2.0)),
             "hardening_exponent": round(rng.uniform(0.06, 0.24), 4)}
+    strength_ratio = rng.uniform(1.3, 2.0)
+    if "cyclic_curve" in material and rng.random() < 0.1:  # so that mean stresses reach it
+        strength_ratio *= 0.25
     material["strain_life"] = {
-        "fatigue_strength_coefficient": stress_text(rng, ultimate * rng.uniform(1.3, 2.0)),
+        "fatigue_strength_coefficient": stress_text(rng, ultimate * strength_ratio),
         "fatigue_strength_exponent": round(rng.uniform(-0.13, -0.06), 4),
         "fatigue_ductility_coefficient": round(rng.uniform(0.1, 1.4), 4),
         "fatigue_ductility_exponent": round(rng.uniform(-0.80, -0.45), 4)}
