@@ -37,7 +37,8 @@ static run measure(const char *command)
     run result = {0};
     wait4(child, &result.status, 0, &usage);
     clock_gettime(CLOCK_MONOTONIC, &end);
-    result.wall = (double)(end.tv_sec - start.tv_sec) + 1e-9 * (double)(end.tv_nsec - start.tv_nsec);
+    result.wall =
+        (double)(end.tv_sec - start.tv_sec) + 1e-9 * (double)(end.tv_nsec - start.tv_nsec);
     result.cpu = seconds(usage.ru_utime) + seconds(usage.ru_stime);
     result.memory_kib = usage.ru_maxrss;
     return result;

@@ -46,9 +46,10 @@ int main(void)
         worst = fmax(worst, fmax(fabs(stress / exact - 1.0), fabs(strain / exact_strain - 1.0)));
     }
     double solve = (t2 - t1) / LOADS, look = (t3 - t2) / LOADS / LOOKS;
-    printf("  built in %.2f ms; one solve %.0f ns, one look %.2f ns, ratio %.0f; largest difference "
-           "%.1e relative%s\n",
-           1e3 * (t1 - t0), 1e9 * solve, 1e9 * look, solve / look, worst, sum < 0.0 ? " " : "");
+    printf(
+        "  built in %.2f ms; one solve %.0f ns, one look %.2f ns, ratio %.0f; largest difference "
+        "%.1e relative%s\n",
+        1e3 * (t1 - t0), 1e9 * solve, 1e9 * look, solve / look, worst, sum < 0.0 ? " " : "");
     nw_notch_curve_free(curve);
     return 0;
 }

@@ -28,9 +28,9 @@ static double reversal(uint64_t *state, uint64_t number)
 static void write_npy_header(FILE *to, uint64_t samples)
 {
     char header[128];
-    int length = snprintf(header, sizeof header,
-                          "{'descr': '<f8', 'fortran_order': False, 'shape': (%" PRIu64 ",), }",
-                          samples);
+    int length =
+        snprintf(header, sizeof header,
+                 "{'descr': '<f8', 'fortran_order': False, 'shape': (%" PRIu64 ",), }", samples);
     for (; (10 + length + 1) % 64 != 0; length++) {
         header[length] = ' ';
     }

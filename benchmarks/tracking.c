@@ -111,7 +111,8 @@ int main(int count, char **arguments)
                                .surface_factor = 1.0,
                                .surface_reversals = 1e6,
                                .life_factor = 1.0};
-    if (nw_notch_curve_build(nw_notch_rule_find("neuber"), &input, largest, &curve, NULL) != NW_OK) {
+    if (nw_notch_curve_build(nw_notch_rule_find("neuber"), &input, largest, &curve, NULL) !=
+        NW_OK) {
         return 1;
     }
     nw_notch_curve_at(curve, largest, &stress, &strain);
@@ -142,7 +143,8 @@ int main(int count, char **arguments)
     qsort(full, (size_t)rounds, sizeof *full, rising);
     qsort(ratio, (size_t)rounds, sizeof *ratio, rising);
     double each = 1e9 / (double)event.count;
-    printf("  %zu turning points, %zu loops: bare counting %.2f ns, with stress, strain and life %.2f ns "
+    printf("  %zu turning points, %zu loops: bare counting %.2f ns, with stress, strain and life "
+           "%.2f ns "
            "a reversal, ratio %.2f (medians of %d; damage %.6g)\n",
            event.count, loops, bare[rounds / 2] * each, full[rounds / 2] * each, ratio[rounds / 2],
            rounds, sum.damage);

@@ -14,5 +14,8 @@ for folder in src include tests benchmarks; do
     [ ! -d "$folder" ] || folders="$folders $folder"
 done
 # shellcheck disable=SC2086 # a list of words
-find $folders -type f \( -name '*.c' -o -name '*.h' \) -exec clang-format --dry-run -Werror {} +
+find $folders -type f \( -name '*.c' -o -name '*.h' \) -exec clang-format --dry-run -Werror {} + || {
+    echo "Format: the files named above differ from .clang-format"
+    exit 1
+}
 echo "Format: all C files are laid out as .clang-format says"

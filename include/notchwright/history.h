@@ -37,6 +37,9 @@ NW_API nw_status nw_history_open(const char *path, const nw_history_options *opt
 NW_API nw_status nw_history_read(nw_history *history, double *values, size_t capacity,
                                  size_t *count, nw_diagnostics *diagnostics);
 
+/* Upper bound of the number of samples, from the size of the file; 0: unknown. */
+NW_API uint64_t nw_history_samples_at_most(const nw_history *history);
+
 /* Unit that the header gives the column, as in "load[MPa]", or "". */
 NW_API const char *nw_history_unit(const nw_history *history);
 
@@ -55,7 +58,8 @@ typedef struct nw_event {
     size_t count;
     size_t capacity;
     uint64_t samples;
-    double repeats; /* >= 1, whole */
+    double load_max_mpa, load_min_mpa; /* of the points; set by nw_event_finish() */
+    double repeats;                    /* >= 1, whole */
     double
         ignore_ranges_below_mpa; /* closed loops with a smaller range of L are left out; 0: none */
 } nw_event;
@@ -70,6 +74,10 @@ typedef struct nw_turning_finder {
     uint64_t previous_sample;
     bool started, rising, has_direction;
 } nw_turning_finder;
+
+/* Makes room for turning points before they come. Room that is never used costs address space only, and
+ * points that need not move are read faster later. It may do nothing. */
+NW_API void nw_event_reserve(nw_event *event, uint64_t points);
 
 NW_API nw_status nw_event_feed(nw_event *event, nw_turning_finder *finder, const double *values,
                                size_t count);

@@ -4,7 +4,6 @@
 
 #include <gsl/gsl_errno.h>
 #include <signal.h>
-#include <stdio.h>
 #include <string.h>
 
 static const nw_verb *const verbs[] = {
@@ -12,54 +11,62 @@ static const nw_verb *const verbs[] = {
 };
 enum { VERBS = sizeof verbs / sizeof verbs[0] };
 
-static void print_help(void)
+static int print_help(void)
 {
     puts("notchwright: strain-life analysis of notched metal parts\n\nUsage:");
     for (size_t i = 0; i < VERBS; i++) {
-        printf("  notchwright %-10s %-12s %s\n", verbs[i]->name, verbs[i]->arguments,
+        printf("  notchwright %-9s %-12s %s\n", verbs[i]->name, verbs[i]->operands,
                verbs[i]->summary);
     }
     puts("\n  notchwright VERB --help   options and an example\n"
          "  notchwright --version\n\n"
          "Life estimates can hurt people when they are wrong. This program supports the judgement "
-         "of a\n"
-         "qualified engineer; it does not replace applicable codes, tests of the part or licensed\n"
+         "of\n"
+         "a qualified engineer; it does not replace applicable codes, tests of the part or "
+         "licensed\n"
          "practice.");
+    return fflush(stdout) == 0 ? 0 : nw_status_exit(NW_FILE);
 }
 
-static int unknown_verb(const char *word)
+static int wrong_usage(const char *word)
 {
     const char *names[VERBS + 1];
     for (size_t i = 0; i < VERBS; i++) {
         names[i] = verbs[i]->name;
     }
     names[VERBS] = NULL;
-    const char *nearest = nw_text_nearest(word, names);
-    return nw_cli_usage(NULL, "unknown verb '%s'%s%s%s", word,
-                        nearest == NULL ? "" : "; did you mean '", nearest == NULL ? "" : nearest,
-                        nearest == NULL ? "" : "'?");
+    const char *nearest = word == NULL ? NULL : nw_text_nearest(word, names);
+    if (word == NULL) {
+        fputs("error: found no verb, expected one\n", stderr);
+    } else {
+        fprintf(stderr, "error: unknown verb '%.60s'%s%s%s\n", word,
+                nearest == NULL ? "" : "; did you mean '", nearest == NULL ? "" : nearest,
+                nearest == NULL ? "" : "'?");
+    }
+    fputs("try: notchwright --help\n", stderr);
+    return nw_status_exit(NW_USAGE);
 }
 
-int main(int count, char **arguments)
+int main(int count, char **words)
 {
     /* A reader that goes away is a file error like any other, not a sudden death. */
     signal(SIGPIPE, SIG_IGN);
     gsl_set_error_handler_off();
-    if (count < 2) {
-        return nw_cli_usage(NULL, "found no verb, expected one");
+    const char *word = count < 2 ? NULL : words[1];
+    if (word == NULL) {
+        return wrong_usage(NULL);
     }
-    if (strcmp(arguments[1], "--version") == 0) {
+    if (strcmp(word, "--version") == 0) {
         printf("notchwright %s\n", nw_version());
         return 0;
     }
-    if (strcmp(arguments[1], "--help") == 0 || strcmp(arguments[1], "-h") == 0) {
-        print_help();
-        return 0;
+    if (strcmp(word, "--help") == 0 || strcmp(word, "-h") == 0) {
+        return print_help();
     }
     for (size_t i = 0; i < VERBS; i++) {
-        if (strcmp(arguments[1], verbs[i]->name) == 0) {
-            return verbs[i]->run(count - 2, arguments + 2);
+        if (strcmp(word, verbs[i]->name) == 0) {
+            return nw_cli_run(verbs[i], count - 2, words + 2);
         }
     }
-    return unknown_verb(arguments[1]);
+    return wrong_usage(word);
 }

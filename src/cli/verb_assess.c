@@ -1,118 +1,76 @@
 /* notchwright assess: the life of one notch under one block. */
-#include "base/file.h"
-#include "cli/options.h"
+#include "cli/verb.h"
 
-#include <stdlib.h>
-#include <string.h>
-#include <unistd.h>
+static const nw_option options[] = {
+    {"--set", "PATH=VALUE", "override an entry of the case: notch.rule=esed, load.2.repeats=5"},
+    {"--require-target", NULL, "exit with 1 when the life is below the target"},
+    {NULL, NULL, NULL},
+};
 
-static const char help[] =
-    "Usage: notchwright assess CASE.yaml [OPTION ...]\n"
-    "\n"
-    "Life of one notch under one repeated block of loading, by the local-strain method:\n"
-    "verdict and life, the loops that do the damage and where in the history they peak.\n"
-    "\n"
-    "Options:\n"
-    "  --format text|json|csv  text for reading (default), the whole result as JSON, or the\n"
-    "                          loops as CSV\n"
-    "  --output FILE           write there (whole or not at all) instead of to standard output\n"
-    "  --set PATH=VALUE        override one entry of the case, e.g. --set notch.rule=esed or\n"
-    "                          --set load.2.repeats=5 (events count from 1); repeatable\n"
-    "  --require-target        exit with 1 when the life is below the target\n"
-    "  --quiet                 no output, only the exit status and errors\n"
-    "  --help                  this text\n"
-    "\n"
-    "Exit status: 0 done, 1 below the target (with --require-target), 2 wrong usage,\n"
-    "3 input refused, 4 could not be computed, 5 file or memory trouble.\n"
-    "\n"
-    "Example:\n"
-    "  notchwright assess examples/forwarder-axle/case.yaml --set notch.rule=esed\n";
+typedef struct written {
+    const nw_case *input;
+    const nw_assessment *result;
+} written;
 
-static nw_status write_result(FILE *to, const nw_options *options, const nw_case *input,
-                              const nw_assessment *result)
+static nw_status write_result(FILE *to, nw_format format, bool colour, const void *data)
 {
-    if (options->format == NW_FORMAT_JSON) {
-        return nw_write_assessment_json(to, input, result);
+    const written *w = data;
+    switch (format) {
+    case NW_FORMAT_JSON:
+        return nw_write_assessment_json(to, w->input, w->result);
+    case NW_FORMAT_CSV:
+        return nw_write_assessment_csv(to, w->input, w->result);
+    default:
+        return nw_write_assessment_text(to, w->input, w->result, colour);
     }
-    if (options->format == NW_FORMAT_CSV) {
-        return nw_write_assessment_csv(to, input, result);
-    }
-    bool colour = to == stdout && isatty(STDOUT_FILENO) && getenv("NO_COLOR") == NULL;
-    return nw_write_assessment_text(to, input, result, colour);
 }
 
-static nw_status write_out(const nw_options *options, const nw_case *input,
-                           const nw_assessment *result, nw_diagnostics *diagnostics)
+static nw_status assess(const nw_arguments *arguments, const nw_case *input,
+                        nw_diagnostics *diagnostics)
 {
-    if (options->quiet && strcmp(options->output, "-") == 0) {
-        return NW_OK;
+    bool require = nw_argument(arguments, "--require-target") != NULL;
+    if (require && !(input->target_blocks > 0.0)) {
+        return nw_fault(diagnostics, NW_USAGE, NULL, "life.target",
+                        "--require-target: the case gives no target");
     }
-    nw_whole_file file;
-    nw_status status = nw_whole_file_open(&file, options->output, diagnostics);
-    if (status != NW_OK) {
-        return status;
-    }
-    status = write_result(file.stream, options, input, result);
-    if (status == NW_MEMORY) {
-        nw_whole_file_discard(&file);
-        return nw_fault(diagnostics, status, NULL, NULL, "out of memory writing the result");
-    }
-    return nw_whole_file_commit(&file, diagnostics);
-}
-
-static nw_status assess(const nw_options *options, nw_diagnostics *diagnostics)
-{
-    nw_case input;
-    nw_status status = nw_case_read(options->operands[0], options->settings, options->setting_count,
-                                    &input, diagnostics);
+    nw_assess_options how = {.all_loops = nw_argument_format(arguments) != NW_FORMAT_TEXT,
+                             .worst = 10};
     nw_assessment *result = NULL;
-    if (status == NW_OK && options->require_target && !(input.target_blocks > 0.0)) {
-        status = nw_fault(diagnostics, NW_USAGE, NULL, "life.target",
-                          "--require-target: the case gives no target");
-    }
+    nw_status status = nw_assess(input, &how, &result, diagnostics);
     if (status == NW_OK) {
-        nw_assess_options how = {.all_loops = options->format != NW_FORMAT_TEXT, .worst = 10};
-        status = nw_assess(&input, &how, &result, diagnostics);
+        written w = {input, result};
+        status = nw_cli_write(arguments, write_result, &w, diagnostics);
     }
-    if (status == NW_OK) {
-        status = write_out(options, &input, result, diagnostics);
-    }
-    if (status == NW_OK && options->require_target && !result->target_reached) {
+    if (status == NW_OK && require && !result->target_reached) {
         status = NW_BELOW_TARGET;
     }
     nw_assessment_free(result);
+    return status;
+}
+
+static nw_status run(const nw_arguments *arguments, nw_diagnostics *diagnostics)
+{
+    const char *settings[NW_MOST_GIVEN];
+    size_t count = nw_argument_all(arguments, "--set", settings, NW_MOST_GIVEN);
+    nw_case input;
+    nw_status status = nw_case_read(arguments->operands[0], settings, count, &input, diagnostics);
+    if (status == NW_OK) {
+        status = assess(arguments, &input, diagnostics);
+    }
     nw_case_clear(&input);
     return status;
 }
 
-static int run(int count, char **arguments)
-{
-    nw_options options;
-    int usage = nw_options_read(&nw_verb_assess, count, arguments, &options);
-    if (usage != 0) {
-        return usage;
-    }
-    if (options.help) {
-        fputs(help, stdout);
-        return 0;
-    }
-    if (options.operand_count != 1) {
-        return nw_cli_usage(&nw_verb_assess, "found %zu case files, expected one",
-                            options.operand_count);
-    }
-    nw_diagnostics diagnostics;
-    nw_diagnostics_clear(&diagnostics);
-    nw_status status = assess(&options, &diagnostics);
-    if (status == NW_OK || status == NW_BELOW_TARGET) {
-        return nw_status_exit(status);
-    }
-    return nw_cli_report(&diagnostics, status);
-}
-
 const nw_verb nw_verb_assess = {
     .name = "assess",
-    .arguments = "CASE.yaml",
+    .operands = "CASE.yaml",
+    .operand_least = 1,
+    .operand_most = 1,
     .summary = "life of one notch under one block",
-    .help = help,
+    .about = "Life of one notch under one repeated block of loading, by the local-strain method:\n"
+             "verdict and life, the loops that do the damage and where in the history they peak.\n"
+             "With --format csv the closed loops, one a row.",
+    .options = options,
+    .example = "notchwright assess examples/forwarder-axle/case.yaml --set notch.rule=esed",
     .run = run,
 };

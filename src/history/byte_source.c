@@ -6,6 +6,7 @@
 #include <fcntl.h>
 #include <stdlib.h>
 #include <string.h>
+#include <sys/stat.h>
 #include <unistd.h>
 #include <zlib.h>
 
@@ -132,6 +133,14 @@ nw_status nw_byte_source_read(nw_byte_source *source, char *bytes, size_t capaci
     }
     *count += (size_t)got;
     return NW_OK;
+}
+
+uint64_t nw_byte_source_size(const nw_byte_source *source)
+{
+    struct stat status;
+    bool plain = source->descriptor >= 0 && fstat(source->descriptor, &status) == 0 &&
+                 S_ISREG(status.st_mode);
+    return plain ? (uint64_t)status.st_size : 0;
 }
 
 const char *nw_byte_source_path(const nw_byte_source *source)

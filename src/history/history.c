@@ -91,6 +91,12 @@ nw_status nw_history_read(nw_history *history, double *values, size_t capacity, 
                                  diagnostics);
 }
 
+/* A sample takes two bytes at the least. */
+uint64_t nw_history_samples_at_most(const nw_history *history)
+{
+    return nw_byte_source_size(history->input.source) / 2;
+}
+
 const char *nw_history_unit(const nw_history *history)
 {
     return history->input.unit;

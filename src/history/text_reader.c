@@ -7,6 +7,9 @@
 #include <math.h>
 #include <stdlib.h>
 #include <string.h>
+#if defined(__SSE2__)
+#include <emmintrin.h>
+#endif
 
 enum { BUFFER_BYTES = 1 << 18 };
 
@@ -125,6 +128,22 @@ static nw_status read_line(text_file *file, const nw_input *input, const char *l
     return NW_OK;
 }
 
+enum { SHORT_LINE = 16 };
+
+/* Length of a line of fewer than SHORT_LINE bytes, else SHORT_LINE. Where the next line starts is then known
+ * before the number of this one is worked out, so the processor can do both at once. */
+static size_t short_line_length(const char *p)
+{
+#if defined(__SSE2__)
+    __m128i bytes = _mm_loadu_si128((const __m128i *)(const void *)p);
+    int ends = _mm_movemask_epi8(_mm_cmpeq_epi8(bytes, _mm_set1_epi8('\n')));
+    return (size_t)__builtin_ctz((unsigned)ends | 1u << SHORT_LINE);
+#else
+    const char *end = memchr(p, '\n', SHORT_LINE);
+    return end == NULL ? SHORT_LINE : (size_t)(end - p);
+#endif
+}
+
 /* Lines of one plain number each, the usual logger's file; stops at the first line that is not. */
 static size_t read_plain_lines(text_file *file, double *values, size_t capacity)
 {
@@ -132,14 +151,14 @@ static size_t read_plain_lines(text_file *file, double *values, size_t capacity)
     char decimal = file->layout.decimal;
     size_t count = 0;
     while (p < end && count < capacity) {
-        double value;
-        const char *stop = nw_number_scan_padded(p, end, decimal, &value);
-        if (stop == NULL || (*stop != '\n' && (*stop != '\r' || stop[1] != '\n')) ||
-            !isfinite(value)) {
+        size_t length = short_line_length(p);
+        size_t ending = length > 0 && p[length - 1] == '\r';
+        const char *stop = nw_number_scan_padded(p, end, decimal, &values[count]);
+        if (length == SHORT_LINE || stop != p + length - ending || !isfinite(values[count])) {
             break;
         }
-        values[count++] = value;
-        p = stop + (*stop == '\r') + 1;
+        count++;
+        p += length + 1;
     }
     file->at += p - file->at;
     file->line += count;

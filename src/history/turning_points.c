@@ -10,6 +10,17 @@ void nw_event_clear(nw_event *event)
     event->count = event->capacity = 0;
 }
 
+enum { MOST_RESERVED = 1 << 27 };
+
+void nw_event_reserve(nw_event *event, uint64_t points)
+{
+    size_t capacity = points < MOST_RESERVED ? (size_t)points + 2 : MOST_RESERVED;
+    if (event->points == NULL) {
+        event->points = malloc(capacity * sizeof *event->points);
+        event->capacity = event->points == NULL ? 0 : capacity;
+    }
+}
+
 /* Grows by halves: a doubling would hold up to twice what long histories need. */
 static nw_status make_room(nw_event *event, size_t more)
 {
@@ -62,15 +73,16 @@ nw_status nw_event_feed(nw_event *event, nw_turning_finder *finder, const double
     nw_turning_point *out = event->points + event->count;
     double previous = finder->previous;
     uint64_t previous_sample = finder->previous_sample, sample = event->samples + i;
-    int rising = finder->rising;
+    unsigned rising = finder->rising;
     for (; i < count; i++, sample++) {
         double load = values[i] * finder->scale + finder->offset;
-        int up = load > previous, changed = load != previous;
+        unsigned up = load > previous, down = load < previous;
         out->load_mpa = previous;
         out->sample = previous_sample;
-        out += changed & (up ^ rising);
-        rising = changed ? up : rising;
-        previous_sample = changed ? sample : previous_sample;
+        out += (up & ~rising) | (down & rising);
+        rising = (rising | up) & ~down;
+        uint64_t changed = -(uint64_t)(up | down);
+        previous_sample ^= (previous_sample ^ sample) & changed;
         previous = load;
     }
     event->count = (size_t)(out - event->points);
@@ -79,6 +91,18 @@ nw_status nw_event_feed(nw_event *event, nw_turning_finder *finder, const double
     finder->previous_sample = previous_sample;
     finder->rising = rising;
     return NW_OK;
+}
+
+static void find_limits(nw_event *event)
+{
+    double high = event->points[0].load_mpa, low = high;
+    for (size_t i = 1; i < event->count; i++) {
+        double load = event->points[i].load_mpa;
+        high = load > high ? load : high;
+        low = load < low ? load : low;
+    }
+    event->load_max_mpa = high;
+    event->load_min_mpa = low;
 }
 
 nw_status nw_event_finish(nw_event *event, nw_turning_finder *finder)
@@ -90,6 +114,7 @@ nw_status nw_event_finish(nw_event *event, nw_turning_finder *finder)
         return NW_MEMORY;
     }
     event->points[event->count++] = (nw_turning_point){finder->previous, finder->previous_sample};
+    find_limits(event);
     nw_turning_point *fitted = realloc(event->points, event->count * sizeof *fitted);
     if (fitted != NULL) {
         event->points = fitted;

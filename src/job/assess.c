@@ -50,9 +50,8 @@ static double largest_load(const run *r)
 {
     double largest = fabs(r->input->residual_stress_mpa);
     for (size_t i = 0; i < r->input->load_count; i++) {
-        for (size_t j = 0; j < r->events[i].count; j++) {
-            largest = fmax(largest, fabs(r->events[i].points[j].load_mpa));
-        }
+        largest =
+            fmax(largest, fmax(fabs(r->events[i].load_max_mpa), fabs(r->events[i].load_min_mpa)));
     }
     return largest;
 }

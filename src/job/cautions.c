@@ -84,10 +84,8 @@ static void load_cautions(const nw_case *input, nw_assessment *result)
         nw_caution_add(
             out, "small_ranges_left_out", "damage_per_block",
             "%.0f closed loops a block were left out (ignore_ranges_below); they would have "
-            "done %.3g damage a block, %.2g of what is counted.",
-            result->left_out.loops, result->left_out.damage,
-            result->damage_per_block > 0.0 ? result->left_out.damage / result->damage_per_block
-                                           : INFINITY);
+            "done %.3g damage a block beside the %.3g counted.",
+            result->left_out.loops, result->left_out.damage, result->damage_per_block);
     }
 }
 

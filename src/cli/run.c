@@ -1,0 +1,66 @@
+/* Running a verb: help, output, faults. */
+#include "base/file.h"
+#include "cli/verb.h"
+
+#include <stdlib.h>
+#include <string.h>
+#include <unistd.h>
+
+nw_status nw_cli_write(const nw_arguments *arguments, nw_writer write, const void *data,
+                       nw_diagnostics *diagnostics)
+{
+    const char *path = nw_argument(arguments, "--output");
+    path = path == NULL ? "-" : path;
+    if (nw_argument(arguments, "--quiet") != NULL && strcmp(path, "-") == 0) {
+        return NW_OK;
+    }
+    nw_whole_file file;
+    nw_status status = nw_whole_file_open(&file, path, diagnostics);
+    if (status != NW_OK) {
+        return status;
+    }
+    bool colour = file.stream == stdout && isatty(STDOUT_FILENO) && getenv("NO_COLOR") == NULL;
+    status = write(file.stream, nw_argument_format(arguments), colour, data);
+    if (status != NW_OK && status != NW_FILE) {
+        nw_whole_file_discard(&file);
+        return nw_fault(diagnostics, status, NULL, NULL, "%s writing the result",
+                        nw_status_text(status));
+    }
+    return nw_whole_file_commit(&file, diagnostics);
+}
+
+static void print_faults(const nw_diagnostics *diagnostics, nw_status status)
+{
+    for (size_t i = 0; i < diagnostics->count; i++) {
+        char line[1200];
+        fprintf(stderr, "%s\n", nw_diagnostic_text(&diagnostics->items[i], line, sizeof line));
+    }
+    if (diagnostics->omitted > 0) {
+        fprintf(stderr, "error: and %zu more\n", diagnostics->omitted);
+    }
+    if (diagnostics->count == 0) {
+        fprintf(stderr, "error: %s\n", nw_status_text(status));
+    }
+}
+
+int nw_cli_run(const nw_verb *verb, int count, char **words)
+{
+    nw_arguments arguments;
+    nw_diagnostics diagnostics;
+    nw_diagnostics_clear(&diagnostics);
+    nw_status status = nw_arguments_read(verb, count, words, &arguments, &diagnostics);
+    if (status == NW_OK && nw_argument(&arguments, "--help") != NULL) {
+        nw_verb_help(verb);
+        return fflush(stdout) == 0 ? 0 : nw_status_exit(NW_FILE);
+    }
+    if (status == NW_OK) {
+        status = verb->run(&arguments, &diagnostics);
+    }
+    if (status != NW_OK && status != NW_BELOW_TARGET) {
+        print_faults(&diagnostics, status);
+    }
+    if (status == NW_USAGE) {
+        fprintf(stderr, "try: notchwright %s --help\n", verb->name);
+    }
+    return nw_status_exit(status);
+}
