@@ -1,6 +1,6 @@
 #include "notch/notch_curve.h"
 
-#include "base/pair_solver.h"
+#include "base/newton.h"
 #include "notch/monotone.h"
 #include "notch/rules.h"
 
@@ -16,22 +16,21 @@ static const double root_tolerance = 1e-11;
 typedef struct problem {
     const nw_notch_rule *rule;
     const nw_rule_input *input;
-    nw_pair_solver *solver;
+    nw_newton *solver;
     double load;
     double guess[2]; /* root of the neighbouring load */
 } problem;
 
 /* Row 0: the cyclic curve, y = x + ln(1 + plastic/elastic). Row 1: the notch rule. */
-static void equations(const void *data, const double unknown[2], double residual[2],
-                      double jacobian[2][2])
+static void equations(const void *data, const double *unknown, double *residual, double *jacobian)
 {
     const problem *p = data;
     double plastic = nw_plastic_ratio(p->input, p->load * exp(unknown[0]));
     double slope = 1.0 / p->input->hardening_exponent - 1.0;
     residual[0] = unknown[1] - unknown[0] - log1p(plastic);
-    jacobian[0][0] = -1.0 - slope * plastic / (1.0 + plastic);
-    jacobian[0][1] = 1.0;
-    p->rule->residual(p->input, p->load, unknown[0], unknown[1], &residual[1], jacobian[1]);
+    jacobian[0] = -1.0 - slope * plastic / (1.0 + plastic);
+    jacobian[1] = 1.0;
+    p->rule->residual(p->input, p->load, unknown[0], unknown[1], &residual[1], &jacobian[2]);
 }
 
 /* Far above yield Newton starts on the side where the plastic strain is not astronomically large. */
@@ -46,11 +45,11 @@ static nw_status solve_at(problem *p, double load, double root[2])
     p->load = load;
     root[0] = p->guess[0];
     root[1] = p->guess[1];
-    nw_status status = nw_pair_solve(p->solver, equations, p, root_tolerance, root);
+    nw_status status = nw_newton_solve(p->solver, equations, p, root_tolerance, root);
     if (status == NW_COMPUTE) {
         root[0] = start_of(p->input, load);
         root[1] = -root[0];
-        status = nw_pair_solve(p->solver, equations, p, root_tolerance, root);
+        status = nw_newton_solve(p->solver, equations, p, root_tolerance, root);
     }
     if (status == NW_OK) {
         p->guess[0] = root[0];
@@ -76,7 +75,7 @@ nw_status nw_notch_rule_solve(const nw_notch_rule *rule, const nw_rule_input *in
         *stress_mpa = *strain = 0.0;
         return NW_OK;
     }
-    nw_status status = nw_pair_solver_create(&p.solver);
+    nw_status status = nw_newton_create(2, &p.solver);
     if (status != NW_OK) {
         return status;
     }
@@ -84,7 +83,7 @@ nw_status nw_notch_rule_solve(const nw_notch_rule *rule, const nw_rule_input *in
     p.guess[0] = start_of(input, size);
     p.guess[1] = -p.guess[0];
     status = solve_at(&p, size, root);
-    nw_pair_solver_free(p.solver);
+    nw_newton_free(p.solver);
     *stress_mpa = load_mpa * exp(root[0]);
     *strain = load_mpa / input->youngs_modulus_mpa * exp(root[1]);
     return status;
@@ -125,7 +124,7 @@ nw_status nw_notch_curve_build(const nw_notch_rule *rule, const nw_rule_input *i
     *curve = NULL;
     problem p = {.rule = rule, .input = input};
     nw_notch_curve *made = new_curve(load_max_mpa, 1.0 / input->youngs_modulus_mpa);
-    if (made == NULL || nw_pair_solver_create(&p.solver) != NW_OK) {
+    if (made == NULL || nw_newton_create(2, &p.solver) != NW_OK) {
         free(made);
         return nw_fault(diagnostics, NW_MEMORY, NULL, NULL,
                         "out of memory building the notch curve");
@@ -134,7 +133,7 @@ nw_status nw_notch_curve_build(const nw_notch_rule *rule, const nw_rule_input *i
     p.guess[1] = -p.guess[0];
     nw_status status = nw_bin_table_build(&made->bins, 2, elastic_load(input, load_max_mpa),
                                           load_max_mpa, curve_tolerance, ratios_at, &p);
-    nw_pair_solver_free(p.solver);
+    nw_newton_free(p.solver);
     if (status != NW_OK) {
         nw_notch_curve_free(made);
         return nw_fault(diagnostics, status, NULL, "notch.rule",

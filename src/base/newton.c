@@ -1,30 +1,41 @@
-#include "base/pair_solver.h"
+#include "base/newton.h"
 
 #include <kinsol/kinsol.h>
 #include <math.h>
 #include <nvector/nvector_serial.h>
 #include <stdlib.h>
+#include <string.h>
 #include <sunlinsol/sunlinsol_dense.h>
 #include <sunmatrix/sunmatrix_dense.h>
 
-struct nw_pair_solver {
+struct nw_newton {
+    size_t size;
     SUNContext context;
     N_Vector unknown, scale;
     SUNMatrix matrix;
     SUNLinearSolver linear;
     void *kinsol;
-    nw_pair_equations equations;
+    nw_newton_equations equations;
     const void *data;
 };
 
+static bool all_finite(const double *values, size_t count)
+{
+    for (size_t i = 0; i < count; i++) {
+        if (!isfinite(values[i])) {
+            return false;
+        }
+    }
+    return true;
+}
+
 static int residual_of(N_Vector unknown, N_Vector residual, void *data)
 {
-    nw_pair_solver *solver = data;
-    double jacobian[2][2];
-    solver->equations(solver->data, N_VGetArrayPointer(unknown), N_VGetArrayPointer(residual),
-                      jacobian);
-    const double *r = N_VGetArrayPointer(residual);
-    return isfinite(r[0]) && isfinite(r[1]) ? 0 : 1;
+    nw_newton *solver = data;
+    double jacobian[NW_NEWTON_MOST * NW_NEWTON_MOST];
+    double *r = N_VGetArrayPointer(residual);
+    solver->equations(solver->data, N_VGetArrayPointer(unknown), r, jacobian);
+    return all_finite(r, solver->size) ? 0 : 1;
 }
 
 static int jacobian_of(N_Vector unknown, N_Vector residual, SUNMatrix matrix, void *data,
@@ -33,12 +44,12 @@ static int jacobian_of(N_Vector unknown, N_Vector residual, SUNMatrix matrix, vo
     (void)residual;
     (void)work1;
     (void)work2;
-    nw_pair_solver *solver = data;
-    double r[2], jacobian[2][2];
+    nw_newton *solver = data;
+    double r[NW_NEWTON_MOST], jacobian[NW_NEWTON_MOST * NW_NEWTON_MOST];
     solver->equations(solver->data, N_VGetArrayPointer(unknown), r, jacobian);
-    for (int row = 0; row < 2; row++) {
-        for (int column = 0; column < 2; column++) {
-            SM_ELEMENT_D(matrix, row, column) = jacobian[row][column];
+    for (size_t row = 0; row < solver->size; row++) {
+        for (size_t column = 0; column < solver->size; column++) {
+            SM_ELEMENT_D(matrix, row, column) = jacobian[row * solver->size + column];
         }
     }
     return 0;
@@ -55,14 +66,15 @@ static void keep_quiet(int code, const char *module, const char *function, char 
     (void)data;
 }
 
-static bool set_up(nw_pair_solver *solver)
+static bool set_up(nw_newton *solver)
 {
+    sunindextype size = (sunindextype)solver->size;
     if (SUNContext_Create(NULL, &solver->context) != 0) {
         return false;
     }
-    solver->unknown = N_VNew_Serial(2, solver->context);
-    solver->scale = N_VNew_Serial(2, solver->context);
-    solver->matrix = SUNDenseMatrix(2, 2, solver->context);
+    solver->unknown = N_VNew_Serial(size, solver->context);
+    solver->scale = N_VNew_Serial(size, solver->context);
+    solver->matrix = SUNDenseMatrix(size, size, solver->context);
     solver->kinsol = KINCreate(solver->context);
     if (solver->unknown == NULL || solver->scale == NULL || solver->matrix == NULL ||
         solver->kinsol == NULL) {
@@ -85,15 +97,16 @@ static bool set_up(nw_pair_solver *solver)
     return true;
 }
 
-nw_status nw_pair_solver_create(nw_pair_solver **solver)
+nw_status nw_newton_create(size_t size, nw_newton **solver)
 {
-    nw_pair_solver *made = calloc(1, sizeof *made);
+    nw_newton *made = calloc(1, sizeof *made);
     *solver = NULL;
     if (made == NULL) {
         return NW_MEMORY;
     }
+    made->size = size;
     if (!set_up(made)) {
-        nw_pair_solver_free(made);
+        nw_newton_free(made);
         return NW_MEMORY;
     }
     *solver = made;
@@ -101,21 +114,26 @@ nw_status nw_pair_solver_create(nw_pair_solver **solver)
 }
 
 /* KINSOL's own verdict is about its step; ours is about the residual that is left. */
-static bool is_root(const nw_pair_solver *solver, const double unknown[2], double tolerance)
+static bool is_root(const nw_newton *solver, const double *unknown, double tolerance)
 {
-    double r[2], jacobian[2][2];
+    double r[NW_NEWTON_MOST], jacobian[NW_NEWTON_MOST * NW_NEWTON_MOST];
     solver->equations(solver->data, unknown, r, jacobian);
-    return fabs(r[0]) <= tolerance && fabs(r[1]) <= tolerance;
+    for (size_t i = 0; i < solver->size; i++) {
+        if (!(fabs(r[i]) <= tolerance)) {
+            return false;
+        }
+    }
+    return true;
 }
 
-nw_status nw_pair_solve(nw_pair_solver *solver, nw_pair_equations equations, const void *data,
-                        double tolerance, double unknown[2])
+nw_status nw_newton_solve(nw_newton *solver, nw_newton_equations equations, const void *data,
+                          double tolerance, double *unknown)
 {
     double *u = N_VGetArrayPointer(solver->unknown);
+    size_t bytes = solver->size * sizeof *u;
     solver->equations = equations;
     solver->data = data;
-    u[0] = unknown[0];
-    u[1] = unknown[1];
+    memcpy(u, unknown, bytes);
     int flag =
         KINSol(solver->kinsol, solver->unknown, KIN_LINESEARCH, solver->scale, solver->scale);
     if (flag == KIN_MEM_FAIL) {
@@ -124,12 +142,11 @@ nw_status nw_pair_solve(nw_pair_solver *solver, nw_pair_equations equations, con
     if (!is_root(solver, u, tolerance)) {
         return NW_COMPUTE;
     }
-    unknown[0] = u[0];
-    unknown[1] = u[1];
+    memcpy(unknown, u, bytes);
     return NW_OK;
 }
 
-void nw_pair_solver_free(nw_pair_solver *solver)
+void nw_newton_free(nw_newton *solver)
 {
     if (solver == NULL) {
         return;
