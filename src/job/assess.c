@@ -124,6 +124,11 @@ static void prepare_tally(run *r)
                       : r->options->worst > NW_WORST_MOST ? NW_WORST_MOST
                                                           : r->options->worst;
     tally->stress_mean_max_mpa = -INFINITY;
+    size_t points = 0;
+    for (size_t i = 0; i < r->input->load_count; i++) {
+        points += r->events[i].count;
+    }
+    nw_tally_reserve(tally, points);
 }
 
 static nw_status pass(run *r)
@@ -231,6 +236,23 @@ static void fill_loop(const run *r, const nw_assessment *result, const nw_counte
     to->tip = nw_history_place_of(r->events, r->input->load_count, from->loop.tip.id);
 }
 
+enum { FILL_CHUNK = 1 << 14 };
+
+/* From the end, giving back the room of what is done: with very many loops both lists whole would be the
+ * largest thing in memory. */
+static void fill_from_end(run *r, nw_assessment *result)
+{
+    for (size_t done = result->loop_count; done > 0;) {
+        size_t from = done > FILL_CHUNK ? done - FILL_CHUNK : 0;
+        for (size_t i = from; i < done; i++) {
+            fill_loop(r, result, &r->tally.kept[i], &result->loops[i]);
+        }
+        done = from;
+        nw_counted_loop *smaller = realloc(r->tally.kept, (from + 1) * sizeof *smaller);
+        r->tally.kept = smaller == NULL ? r->tally.kept : smaller;
+    }
+}
+
 static nw_status fill_loops(run *r, nw_assessment *result)
 {
     size_t count = r->tally.kept_count;
@@ -242,9 +264,7 @@ static nw_status fill_loops(run *r, nw_assessment *result)
         return no_memory(r);
     }
     result->loop_count = count;
-    for (size_t i = 0; i < count; i++) {
-        fill_loop(r, result, &r->tally.kept[i], &result->loops[i]);
-    }
+    fill_from_end(r, result);
     return NW_OK;
 }
 

@@ -68,6 +68,15 @@ static void offer_top(nw_tally *tally, double damage)
     top[at] = damage;
 }
 
+void nw_tally_reserve(nw_tally *tally, size_t loops)
+{
+    size_t capacity = loops + BATCH;
+    tally->kept = capacity < SIZE_MAX / sizeof *tally->kept
+                      ? malloc(capacity * sizeof *tally->kept)
+                      : NULL;
+    tally->kept_capacity = tally->kept == NULL ? 0 : capacity;
+}
+
 static nw_status keep(nw_tally *tally, const nw_loop *loops, const double *rates, size_t count,
                       double weight)
 {

@@ -42,6 +42,9 @@ typedef struct nw_tally {
 /* nw_loop_sink for an nw_tally. */
 nw_status nw_tally_loops(void *tally, const nw_loop *loops, size_t count, double weight);
 
+/* Room for loops to be kept, which costs address space only until it is used. It may do nothing. */
+void nw_tally_reserve(nw_tally *tally, size_t loops);
+
 /* Forgets what was counted, keeps the settings. */
 void nw_tally_restart(nw_tally *tally);
 

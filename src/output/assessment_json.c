@@ -2,6 +2,8 @@
 #include "notchwright/notchwright.h"
 #include "output/json.h"
 
+#include <inttypes.h>
+
 static json_t *method_object(const nw_case *input, const nw_assessment *result)
 {
     return json_pack(
@@ -128,24 +130,38 @@ static json_t *head_object(const nw_case *input, const nw_assessment *result)
                      "loops_total", nw_json_count(result->loops_total));
 }
 
-static json_t *place_object(const nw_case *input, nw_history_place place)
-{
-    return json_pack("{s:I, s:o, s:I}", "event", (json_int_t)place.event + 1, "history",
-                     nw_json_text(input->loads[place.event].label), "sample",
-                     (json_int_t)place.sample + 1);
-}
-
-static json_t *loop_object(const nw_case *input, const nw_loop_result *loop)
+/* Plain numbers only, so they are written directly: there may be a million of them. */
+static void put_loop(FILE *to, const nw_loop_result *loop)
 {
     const nw_loop_values *v = &loop->values;
-    return json_pack("{s:o, s:f, s:f, s:f, s:f, s:f, s:f, s:f, s:o, s:f, s:f, s:o, s:o}", "count",
-                     nw_json_count(loop->count), "load_max_mpa", v->load_max_mpa, "load_min_mpa",
-                     v->load_min_mpa, "strain_amplitude", v->strain_amplitude, "strain_mean",
-                     v->strain_mean, "stress_max_mpa", v->stress_max_mpa, "stress_min_mpa",
-                     v->stress_min_mpa, "stress_mean_mpa", v->stress_mean_mpa,
-                     "cycles_to_initiation", nw_json_number(loop->cycles), "damage", loop->damage,
-                     "share", loop->share, "start", place_object(input, loop->start), "tip",
-                     place_object(input, loop->tip));
+    const struct {
+        const char *key;
+        double value;
+    } numbers[] = {
+        {"load_max_mpa", v->load_max_mpa},
+        {"load_min_mpa", v->load_min_mpa},
+        {"strain_amplitude", v->strain_amplitude},
+        {"strain_mean", v->strain_mean},
+        {"stress_max_mpa", v->stress_max_mpa},
+        {"stress_min_mpa", v->stress_min_mpa},
+        {"stress_mean_mpa", v->stress_mean_mpa},
+        {"cycles_to_initiation", loop->cycles},
+        {"damage", loop->damage},
+        {"share", loop->share},
+    };
+    fprintf(to, "{\"count\":%.15g", loop->count);
+    for (size_t i = 0; i < sizeof numbers / sizeof numbers[0]; i++) {
+        if (isfinite(numbers[i].value)) {
+            fprintf(to, ",\"%s\":%.15g", numbers[i].key, numbers[i].value);
+        } else {
+            fprintf(to, ",\"%s\":null", numbers[i].key);
+        }
+    }
+    fprintf(to,
+            ",\"start\":{\"event\":%zu,\"sample\":%" PRIu64 "},\"tip\":{\"event\":%zu,"
+            "\"sample\":%" PRIu64 "}}",
+            loop->start.event + 1, loop->start.sample + 1, loop->tip.event + 1,
+            loop->tip.sample + 1);
 }
 
 /* Writes and releases; NULL means memory ran out while building. */
@@ -166,7 +182,7 @@ nw_status nw_write_assessment_json(FILE *to, const nw_case *input, const nw_asse
     fputs(",\n \"loops\": [", to);
     for (size_t i = 0; i < result->loop_count && status == NW_OK; i++) {
         fputs(i == 0 ? "\n  " : ",\n  ", to);
-        status = put(to, loop_object(input, &result->loops[i]), JSON_COMPACT);
+        put_loop(to, &result->loops[i]);
     }
     fputs("\n ],\n \"cautions\": ", to);
     if (status == NW_OK) {

@@ -1,4 +1,4 @@
-/* Exit statuses, what goes where, and output files that are whole or not there at all. */
+/* Exit statuses, what goes to standard output and what to standard error, help, colour. */
 #define _XOPEN_SOURCE 700
 
 #include "support/bad_input.h"
@@ -6,8 +6,6 @@
 #include <fcntl.h>
 #include <sys/wait.h>
 #include <unistd.h>
-
-#define EXAMPLE TEST_SOURCE_DIR "/examples/forwarder-axle/case.yaml"
 
 /* The base case in a scratch folder of its own. */
 typedef struct bench {
@@ -44,7 +42,6 @@ static void expect(const bench *b, int status, const char *arguments)
     test_result_free(&result);
 }
 
-/* Case: life about 5e4 blocks or more, so both sides of a target are far away. */
 static void statuses(void **state)
 {
     expect(*state, 0, "");
@@ -133,128 +130,6 @@ static void example_of_the_help_runs(void **state)
     test_result_free(&help);
 }
 
-/* ---- output files ---- */
-
-/* Fails unless the scratch folder holds just these files ("case.yaml" and others, sorted). */
-static void assert_files(const bench *b, const char *names)
-{
-    test_result listing = test_shell("ls -A '%s'", b->scratch.path);
-    assert_string_equal(listing.out, names);
-    test_result_free(&listing);
-}
-
-static void output_file_holds_what_standard_output_would(void **state)
-{
-    const bench *b = *state;
-    const char *const formats[] = {"text", "json", "csv"};
-    for (int i = 0; i < 3; i++) {
-        test_result direct = test_shell("\"$NW\" assess '%s' --format %s", b->path, formats[i]);
-        test_result filed =
-            test_shell("cd '%s' && echo old >out && \"$NW\" assess case.yaml --quiet --format %s "
-                       "--output out",
-                       b->scratch.path, formats[i]);
-        assert_int_equal(filed.status, 0);
-        assert_string_equal(filed.out, "");
-        assert_string_equal(filed.err, "");
-        char *content = test_read_file(test_scratch_path(&b->scratch, "out"));
-        assert_string_equal(content, direct.out);
-        free(content);
-        test_result_free(&direct);
-        test_result_free(&filed);
-    }
-    assert_files(b, "case.yaml\nout\n");
-}
-
-/* Runs `command` with an old file "out" there; it must fail with `status` and leave the file as it was. */
-static void assert_out_untouched(const bench *b, int status, const char *command)
-{
-    test_scratch_text(&b->scratch, "out", "old content\n");
-    test_result result = test_shell("cd '%s' && %s", b->scratch.path, command);
-    if (result.status != status) {
-        fail_msg("%s: exit status %d, expected %d\n%s", command, result.status, status, result.err);
-    }
-    assert_string_not_equal(result.err, "");
-    char *content = test_read_file(test_scratch_path(&b->scratch, "out"));
-    assert_string_equal(content, "old content\n");
-    free(content);
-    test_result_free(&result);
-    assert_files(b, "case.yaml\nout\n");
-}
-
-static void failed_run_leaves_the_output_file(void **state)
-{
-    const bench *b = *state;
-    assert_out_untouched(b, 3, "\"$NW\" assess case.yaml --output out --set notch.kt=0");
-    assert_out_untouched(b, 5, "\"$NW\" assess case.yaml --output out --set load.1.history=no.csv");
-    assert_out_untouched(b, 4,
-                         "\"$NW\" assess case.yaml --output out "
-                         "--set 'material.cyclic_curve.strength_coefficient=1e-300 MPa'");
-    assert_out_untouched(b, 2, "\"$NW\" assess case.yaml --output out --format xml");
-}
-
-/* A limit on the size of files stands for a disk that fills up while the result is written. */
-static void full_disk_leaves_the_output_file(void **state)
-{
-    const char *const limit =
-        "trap '' XFSZ; ulimit -f 8; \"$NW\" assess '" EXAMPLE "' --format csv "
-        "--output out";
-    assert_out_untouched(*state, 5, limit);
-}
-
-static void full_device_is_told(void **state)
-{
-    const bench *b = *state;
-    if (access("/dev/full", W_OK) != 0) {
-        skip();
-    }
-    const char *const rows[] = {"--output /dev/full", "> /dev/full", "--format json > /dev/full",
-                                "--format csv > /dev/full"};
-    for (size_t i = 0; i < sizeof rows / sizeof rows[0]; i++) {
-        test_result result = test_shell("\"$NW\" assess '%s' %s", b->path, rows[i]);
-        assert_int_equal(result.status, 5);
-        assert_non_null(strstr(result.err, "cannot be written: No space left on device"));
-        test_result_free(&result);
-    }
-}
-
-/* Help and version are results too: lost output is no success. */
-static void full_device_is_told_by_help(void **state)
-{
-    (void)state;
-    if (access("/dev/full", W_OK) != 0) {
-        skip();
-    }
-    const char *const rows[] = {"--help", "--version", "assess --help"};
-    for (size_t i = 0; i < sizeof rows / sizeof rows[0]; i++) {
-        test_result result = test_shell("\"$NW\" %s > /dev/full", rows[i]);
-        assert_int_equal(result.status, 5);
-        test_result_free(&result);
-    }
-}
-
-/* More output than a pipe holds, so that the program is still writing when its reader has gone. */
-static void closed_pipe_is_told(void **state)
-{
-    const bench *b = *state;
-    const char *status = test_scratch_path(&b->scratch, "status");
-    test_result result =
-        test_shell("{ \"$NW\" assess '" EXAMPLE "' --format csv; echo $? >'%s'; } | true", status);
-    char *content = test_read_file(status);
-    assert_string_equal(content, "5\n");
-    assert_non_null(strstr(result.err, "standard output: error: cannot be written: Broken pipe"));
-    free(content);
-    test_result_free(&result);
-}
-
-static void closed_standard_output_is_told(void **state)
-{
-    const bench *b = *state;
-    test_result result = test_shell("\"$NW\" assess '%s' >&-", b->path);
-    assert_int_equal(result.status, 5);
-    assert_non_null(strstr(result.err, "standard output: error: cannot be written: "));
-    test_result_free(&result);
-}
-
 /* ---- colour ---- */
 
 /* What the program prints on a terminal, with NO_COLOR or without. */
@@ -307,14 +182,6 @@ int main(void)
         cmocka_unit_test_setup_teardown(quiet_prints_errors_alone, set_up, tear_down),
         cmocka_unit_test(help_and_version),
         cmocka_unit_test(example_of_the_help_runs),
-        cmocka_unit_test_setup_teardown(output_file_holds_what_standard_output_would, set_up,
-                                        tear_down),
-        cmocka_unit_test_setup_teardown(failed_run_leaves_the_output_file, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(full_disk_leaves_the_output_file, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(full_device_is_told, set_up, tear_down),
-        cmocka_unit_test(full_device_is_told_by_help),
-        cmocka_unit_test_setup_teardown(closed_pipe_is_told, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(closed_standard_output_is_told, set_up, tear_down),
         cmocka_unit_test_setup_teardown(colour_on_a_terminal_unless_refused, set_up, tear_down),
     };
     return cmocka_run_group_tests_name("exit_and_output", tests, NULL, NULL);

@@ -19,7 +19,7 @@ import assess_reference
 # it appears where the peak stress is zero but for rounding.
 NO_DAMAGE = 1e-20
 
-# Loops of the same load range whose stresses differ by less are one loop.
+# Loops of one result that lie closer together (see `distance`) are one loop.
 SAME_LOOP = 1e-7
 
 # Each pair is judged relative to the larger of its two sizes: one of them may be
@@ -57,29 +57,26 @@ class Judge:
                 self.close(f"{what}.{name}", found[name], expected[name], floor)
 
 
-def same_loop(a, b):
-    """Same load range and same place in stress, whatever the rounding."""
-    size = max(abs(b["load_max_mpa"]), abs(b["load_min_mpa"]))
-    return all(abs(a[name] - b[name]) <= SAME_LOOP * size
-               for name in ("load_max_mpa", "load_min_mpa", "stress_max_mpa"))
+def distance(a, b):
+    """How far apart two loops lie in load, stress and strain, relative to b."""
+    load_range = b["load_max_mpa"] - b["load_min_mpa"]
+    sizes = {"load_max_mpa": load_range, "load_min_mpa": load_range,
+             "stress_max_mpa": load_range, "stress_min_mpa": load_range,
+             "strain_mean": b["strain_amplitude"], "strain_amplitude": b["strain_amplitude"]}
+    return max(abs(a[name] - b[name]) / size for name, size in sizes.items())
 
 
 def merged(loops):
     """Distinct loops with their counts and damages added up."""
     result = []
     for loop in loops:
-        twin = next((other for other in result if same_loop(loop, other)), None)
+        twin = next((other for other in result if distance(loop, other) <= SAME_LOOP), None)
         if twin is None:
             result.append(dict(loop))
         else:
             for name in ("count", "damage", "share"):
                 twin[name] += loop[name]
     return result
-
-
-def distance(a, b):
-    return max(abs(a[name] - b[name])
-               for name in ("load_max_mpa", "load_min_mpa", "stress_max_mpa", "stress_min_mpa"))
 
 
 def loop_name(loop):
