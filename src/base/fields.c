@@ -127,23 +127,29 @@ static void read_number(nw_field_reader *reader, const nw_node *node, const char
     check_limits(reader, node, path, row, *value);
 }
 
+int nw_field_word(nw_field_reader *reader, const nw_node *node, const char *path, const char *key,
+                  const char *const *words)
+{
+    if (!is_scalar(reader, node, path, key)) {
+        return -1;
+    }
+    int index = nw_choice_index(words, node->scalar);
+    if (index < 0) {
+        char list[300];
+        const char *nearest = nw_text_nearest(node->scalar, words);
+        nw_field_fault(reader, node, path, key, "found '%.60s', expected %s%s%s%s", node->scalar,
+                       nw_text_join(list, sizeof list, words),
+                       nearest == NULL ? "" : "; did you mean '", nearest == NULL ? "" : nearest,
+                       nearest == NULL ? "" : "'?");
+    }
+    return index;
+}
+
 static void read_choice(nw_field_reader *reader, const nw_node *node, const char *path,
                         const nw_field *row, int *value)
 {
-    if (!is_scalar(reader, node, path, row->key)) {
-        return;
-    }
-    int index = nw_choice_index(row->choices, node->scalar);
-    if (index >= 0) {
-        *value = index;
-        return;
-    }
-    char list[300];
-    const char *nearest = nw_text_nearest(node->scalar, row->choices);
-    nw_field_fault(reader, node, path, row->key, "found '%.60s', expected %s%s%s%s", node->scalar,
-                   nw_text_join(list, sizeof list, row->choices),
-                   nearest == NULL ? "" : "; did you mean '", nearest == NULL ? "" : nearest,
-                   nearest == NULL ? "" : "'?");
+    int index = nw_field_word(reader, node, path, row->key, row->choices);
+    *value = index >= 0 ? index : *value;
 }
 
 static void read_text(nw_field_reader *reader, const nw_node *node, const char *path,

@@ -47,6 +47,11 @@ void nw_field_fault(nw_field_reader *reader, const nw_node *node, const char *pa
 bool nw_field_quantity(nw_field_reader *reader, const nw_node *node, const char *path,
                        const char *key, nw_dimension dimension, double *value);
 
+/* One scalar as a word of a NULL-terminated list: its index, or -1 and a fault that lists the words and names
+ * the nearest. */
+int nw_field_word(nw_field_reader *reader, const nw_node *node, const char *path, const char *key,
+                  const char *const *words);
+
 /* Writes "path.key" (or "key"). */
 char *nw_field_path(char *text, size_t capacity, const char *path, const char *key);
 

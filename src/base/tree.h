@@ -47,6 +47,12 @@ const nw_node *nw_node_entry(const nw_node *map, const char *key);
 nw_place nw_node_place(const nw_node *node);
 nw_place nw_node_key_place(const nw_node *node);
 
+/* A place in `file`. */
+nw_place nw_tree_place(const char *file, size_t line, size_t column);
+
+/* Takes the child over: it is freed when there is no room for it (NW_MEMORY). */
+nw_status nw_node_append(nw_node *parent, nw_node *child);
+
 void nw_node_free(nw_node *node);
 
 #endif

@@ -39,27 +39,15 @@ static void read_correction(nw_field_reader *reader, const nw_node *map, nw_case
 {
     result->correction = nw_correction_find("swt");
     const nw_node *node = nw_node_entry(map, "mean_stress");
-    if (node == NULL) {
-        return;
+    const char *keys[MOST_CORRECTIONS + 1] = {NULL};
+    const nw_correction *record;
+    for (size_t i = 0; i < MOST_CORRECTIONS && (record = nw_correction_at(i)) != NULL; i++) {
+        keys[i] = record->key;
     }
-    const char *keys[MOST_CORRECTIONS + 1];
-    size_t count = 0;
-    for (const nw_correction *r;
-         count < MOST_CORRECTIONS && (r = nw_correction_at(count)) != NULL;) {
-        keys[count++] = r->key;
+    int index = node == NULL ? -1 : nw_field_word(reader, node, "life", "mean_stress", keys);
+    if (index >= 0) {
+        result->correction = nw_correction_at((size_t)index);
     }
-    keys[count] = NULL;
-    const char *word = node->kind == NW_NODE_SCALAR ? node->scalar : "a list or map";
-    const nw_correction *found = nw_correction_find(word);
-    if (found != NULL) {
-        result->correction = found;
-        return;
-    }
-    char list[300];
-    const char *nearest = nw_text_nearest(word, keys);
-    nw_field_fault(reader, node, "life", "mean_stress", "found '%.60s', expected %s%s%s%s", word,
-                   nw_text_join(list, sizeof list, keys), nearest == NULL ? "" : "; did you mean '",
-                   nearest == NULL ? "" : nearest, nearest == NULL ? "" : "'?");
 }
 
 static double or_default(double value, double otherwise)

@@ -42,27 +42,16 @@ static void read_rule(nw_field_reader *reader, const nw_node *map, nw_case *resu
 {
     result->rule = nw_notch_rule_at(0);
     const nw_node *node = nw_node_entry(map, "rule");
-    if (node == NULL) {
-        return;
+    const char *keys[MOST_RULES + 1] = {NULL};
+    const nw_notch_rule *rule;
+    for (size_t i = 0; i < MOST_RULES && (rule = nw_notch_rule_at(i)) != NULL; i++) {
+        keys[i] = rule->key;
     }
-    const char *keys[MOST_RULES + 1];
-    size_t count = 0;
-    for (const nw_notch_rule *r; count < MOST_RULES && (r = nw_notch_rule_at(count)) != NULL;) {
-        keys[count++] = r->key;
-    }
-    keys[count] = NULL;
-    const char *word = node->kind == NW_NODE_SCALAR ? node->scalar : "a list or map";
-    const nw_notch_rule *rule = nw_notch_rule_find(word);
-    if (rule != NULL) {
-        result->rule = rule;
+    int index = node == NULL ? -1 : nw_field_word(reader, node, "notch", "rule", keys);
+    if (index >= 0) {
+        result->rule = nw_notch_rule_at((size_t)index);
         result->rule_given = true;
-        return;
     }
-    char list[300];
-    const char *nearest = nw_text_nearest(word, keys);
-    nw_field_fault(reader, node, "notch", "rule", "found '%.60s', expected %s%s%s%s", word,
-                   nw_text_join(list, sizeof list, keys), nearest == NULL ? "" : "; did you mean '",
-                   nearest == NULL ? "" : nearest, nearest == NULL ? "" : "'?");
 }
 
 static void read_curve_file(nw_field_reader *reader, const nw_node *map, nw_case *result)

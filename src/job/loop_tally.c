@@ -71,9 +71,8 @@ static void offer_top(nw_tally *tally, double damage)
 void nw_tally_reserve(nw_tally *tally, size_t loops)
 {
     size_t capacity = loops + BATCH;
-    tally->kept = capacity < SIZE_MAX / sizeof *tally->kept
-                      ? malloc(capacity * sizeof *tally->kept)
-                      : NULL;
+    tally->kept =
+        capacity < SIZE_MAX / sizeof *tally->kept ? malloc(capacity * sizeof *tally->kept) : NULL;
     tally->kept_capacity = tally->kept == NULL ? 0 : capacity;
 }
 
