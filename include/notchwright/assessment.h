@@ -123,9 +123,14 @@ typedef struct nw_assessment {
     nw_cautions cautions;
 } nw_assessment;
 
+/* Told now and then while a long history is read. */
+typedef void (*nw_progress)(void *data, const char *history, uint64_t samples);
+
 typedef struct nw_assess_options {
-    bool all_loops; /* keep every distinct loop; else the worst ones */
-    size_t worst;   /* how many, without all_loops */
+    bool all_loops;       /* keep every distinct loop; else the worst ones */
+    size_t worst;         /* how many, without all_loops (at most 64) */
+    nw_progress progress; /* may be NULL */
+    void *progress_data;
 } nw_assess_options;
 
 /* Assesses a case.

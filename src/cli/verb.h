@@ -72,6 +72,15 @@ typedef nw_status (*nw_writer)(FILE *to, nw_format format, bool colour, const vo
 nw_status nw_cli_write(const nw_arguments *arguments, nw_writer write, const void *data,
                        nw_diagnostics *diagnostics);
 
+/* A line on standard error that says how far reading is: only on a terminal, only after a second of work. */
+typedef struct nw_cli_progress {
+    double started;
+    bool shown;
+} nw_cli_progress;
+nw_cli_progress nw_cli_progress_start(void);
+void nw_cli_progress_tell(void *progress, const char *history, uint64_t samples);
+void nw_cli_progress_end(nw_cli_progress *progress);
+
 /* Runs a verb on its words: help, faults on standard error; returns the exit status. */
 int nw_cli_run(const nw_verb *verb, int count, char **words);
 

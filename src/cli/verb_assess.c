@@ -33,10 +33,14 @@ static nw_status assess(const nw_arguments *arguments, const nw_case *input,
         return nw_fault(diagnostics, NW_USAGE, NULL, "life.target",
                         "--require-target: the case gives no target");
     }
+    nw_cli_progress progress = nw_cli_progress_start();
     nw_assess_options how = {.all_loops = nw_argument_format(arguments) != NW_FORMAT_TEXT,
-                             .worst = 10};
+                             .worst = 10,
+                             .progress = nw_cli_progress_tell,
+                             .progress_data = &progress};
     nw_assessment *result = NULL;
     nw_status status = nw_assess(input, &how, &result, diagnostics);
+    nw_cli_progress_end(&progress);
     if (status == NW_OK) {
         written w = {input, result};
         status = nw_cli_write(arguments, write_result, &w, diagnostics);

@@ -42,7 +42,8 @@ static void free_run(run *r)
 static nw_status read_events(run *r)
 {
     r->events = calloc(r->input->load_count, sizeof *r->events);
-    return r->events == NULL ? no_memory(r) : nw_case_events(r->input, r->events, r->diagnostics);
+    return r->events == NULL ? no_memory(r)
+                             : nw_case_events(r->input, r->options, r->events, r->diagnostics);
 }
 
 /* The largest |L| that a branch or the initial curve can reach. */

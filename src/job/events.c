@@ -6,7 +6,7 @@
 #include <stdlib.h>
 #include <string.h>
 
-enum { BATCH = 4096 };
+enum { BATCH = 4096, PROGRESS_BATCHES = 256 };
 
 /* L per unit of the load's quantity. */
 static double load_per_quantity(const nw_case *input, const nw_load *load)
@@ -51,8 +51,17 @@ static nw_status start_finder(const nw_case *input, const nw_load *load, const c
     return status;
 }
 
-static nw_status stream_file(const nw_case *input, const nw_load *load, nw_history *history,
-                             nw_event *event, nw_diagnostics *diagnostics)
+static void tell_progress(const nw_assess_options *options, const nw_load *load,
+                          const nw_event *event)
+{
+    if (options->progress != NULL && event->samples / BATCH % PROGRESS_BATCHES == 0) {
+        options->progress(options->progress_data, load->label, event->samples);
+    }
+}
+
+static nw_status stream_file(const nw_case *input, const nw_assess_options *options,
+                             const nw_load *load, nw_history *history, nw_event *event,
+                             nw_diagnostics *diagnostics)
 {
     nw_turning_finder finder;
     nw_status status = start_finder(input, load, nw_history_unit(history), &finder, diagnostics);
@@ -69,19 +78,20 @@ static nw_status stream_file(const nw_case *input, const nw_load *load, nw_histo
             status = nw_fault(diagnostics, NW_MEMORY, NULL, NULL,
                               "out of memory for the turning points of %s", load->label);
         }
+        tell_progress(options, load, event);
     }
     free(values);
     return status == NW_OK ? nw_event_finish(event, &finder) : status;
 }
 
-static nw_status read_file(const nw_case *input, const nw_load *load, nw_event *event,
-                           nw_diagnostics *diagnostics)
+static nw_status read_file(const nw_case *input, const nw_assess_options *options,
+                           const nw_load *load, nw_event *event, nw_diagnostics *diagnostics)
 {
     nw_history_options options = {load->column[0] == '\0' ? NULL : load->column, load->decimal};
     nw_history *history = NULL;
     nw_status status = nw_history_open(load->history, &options, &history, diagnostics);
     if (status == NW_OK) {
-        status = stream_file(input, load, history, event, diagnostics);
+        status = stream_file(input, options, load, history, event, diagnostics);
     }
     nw_history_close(history);
     return status;
@@ -131,7 +141,8 @@ static bool has_reversal(const nw_event *events, size_t count)
     return false;
 }
 
-nw_status nw_case_events(const nw_case *input, nw_event *events, nw_diagnostics *diagnostics)
+nw_status nw_case_events(const nw_case *input, const nw_assess_options *options, nw_event *events,
+                         nw_diagnostics *diagnostics)
 {
     nw_status status = NW_OK;
     memset(events, 0, input->load_count * sizeof *events);
@@ -141,8 +152,9 @@ nw_status nw_case_events(const nw_case *input, nw_event *events, nw_diagnostics 
         events[i].ignore_ranges_below_mpa =
             load->ignore_ranges_below_mpa *
             (load->kind == NW_NOTCH_STRAIN ? input->material.youngs_modulus_mpa : 1.0);
-        nw_status one = load->values != NULL ? read_inline(input, load, &events[i], diagnostics)
-                                             : read_file(input, load, &events[i], diagnostics);
+        nw_status one = load->values != NULL
+                            ? read_inline(input, load, &events[i], diagnostics)
+                            : read_file(input, options, load, &events[i], diagnostics);
         if (one == NW_OK) {
             one = check_finite(load, &events[i], diagnostics);
         }
