@@ -12,6 +12,8 @@
 
 #include "notchwright/status.h"
 
+#include <stdio.h>
+
 #ifdef __cplusplus
 extern "C" {
 #endif
@@ -49,6 +51,8 @@ typedef struct nw_material {
     double ultimate_strength_mpa;
     double reduction_of_area; /* ratio */
     double hardness_hb;
+    double fracture_stress_mpa; /* true stress at fracture */
+    double fracture_strain;     /* true strain at fracture, ln(1/(1 - reduction of area)) */
 
     double strength_coefficient_mpa; /* K' */
     double hardening_exponent;       /* n' */
@@ -80,6 +84,13 @@ NW_API const char *nw_origin_name(nw_origin origin);
  * Returns NW_OK, NW_INPUT, NW_FILE or NW_MEMORY. */
 NW_API nw_status nw_material_read(const char *path, nw_material *material,
                                   nw_diagnostics *diagnostics);
+
+/* Writes a material file that nw_material_read() reads back to the same numbers, bit by bit. Group and basis
+ * must be stated and the curves complete. Values that are unknown (NAN, or not above 0 where only positive
+ * ones make sense) are left out; a text longer than its array is cut. The key `estimate` is not written: the
+ * parameters stand in the file.
+ * Returns NW_OK or NW_FILE (the stream's error). */
+NW_API nw_status nw_material_write(FILE *to, const nw_material *material);
 
 /* Finds a library material by name: in the folders of the environment variable
  * NOTCHWRIGHT_MATERIALS (separated by ':'), then in the folder installed with the library, then in

@@ -87,9 +87,9 @@ static nw_status stream_file(const nw_case *input, const nw_assess_options *opti
 static nw_status read_file(const nw_case *input, const nw_assess_options *options,
                            const nw_load *load, nw_event *event, nw_diagnostics *diagnostics)
 {
-    nw_history_options options = {load->column[0] == '\0' ? NULL : load->column, load->decimal};
+    nw_history_options how = {load->column[0] == '\0' ? NULL : load->column, load->decimal};
     nw_history *history = NULL;
-    nw_status status = nw_history_open(load->history, &options, &history, diagnostics);
+    nw_status status = nw_history_open(load->history, &how, &history, diagnostics);
     if (status == NW_OK) {
         status = stream_file(input, options, load, history, event, diagnostics);
     }
