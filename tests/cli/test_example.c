@@ -128,11 +128,10 @@ static void all_samples_count(void **state)
 }
 
 /* Notch stress of the sample that a loop names. */
-static double load_at(const json_t *root, const samples *all, const json_t *place)
+static double load_at(const samples *all, const json_t *place)
 {
     size_t event = (size_t)number(place, "event") - 1, sample = (size_t)number(place, "sample") - 1;
     assert_true(event < EVENTS && sample < all[event].count);
-    assert_string_equal(history_of(place), history_of(json_array_get(events_of(root), event)));
     return kt * scale_mpa * all[event].values[sample];
 }
 
@@ -151,7 +150,7 @@ static void loops_name_the_samples_that_make_them(void **state)
     json_array_foreach(json_object_get(root, "loops"), index, loop)
     {
         const json_t *start = json_object_get(loop, "start"), *tip = json_object_get(loop, "tip");
-        double a = load_at(root, all, start), b = load_at(root, all, tip);
+        double a = load_at(all, start), b = load_at(all, tip);
         assert_near(fmax(a, b), number(loop, "load_max_mpa"), 1e-12, 1e-9);
         assert_near(fmin(a, b), number(loop, "load_min_mpa"), 1e-12, 1e-9);
         met[(size_t)number(start, "event") - 1] = met[(size_t)number(tip, "event") - 1] = true;
@@ -203,8 +202,9 @@ static void text_says_first_what_matters(void **state)
     assert_non_null(strstr(result.out, "3 events, "));
     const json_t *worst = json_array_get(json_object_get(root, "loops"), 0);
     const json_t *start = json_object_get(worst, "start"), *tip = json_object_get(worst, "tip");
-    assert_string_equal(history_of(start), history_of(tip));
-    snprintf(place, sizeof place, "%s: samples %.0f and %.0f\n", history_of(start),
+    assert_near(number(start, "event"), number(tip, "event"), 0.0, 0.0);
+    const json_t *event = json_array_get(events_of(root), (size_t)number(start, "event") - 1);
+    snprintf(place, sizeof place, "%s: samples %.0f and %.0f\n", history_of(event),
              number(start, "sample"), number(tip, "sample"));
     assert_non_null(strstr(result.out, place));
     json_decref(root);

@@ -75,7 +75,7 @@ def merged(loops):
             result.append(dict(loop))
         else:
             for name in ("count", "damage", "share"):
-                twin[name] += loop[name]
+                twin[name] = (twin[name] or 0) + (loop[name] or 0)
     return result
 
 
