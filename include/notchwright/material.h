@@ -102,12 +102,39 @@ NW_API nw_status nw_material_find(const char *name, char *path, size_t capacity,
 
 /* ---- estimates: one record each ---- */
 
-/* What an estimate may use; NAN where unknown. */
+/* What an estimate may use. All are positive; a value that is unknown is NAN. */
 typedef struct nw_estimate_input {
     nw_group group;
-    double ultimate_strength_mpa;
-    double youngs_modulus_mpa;
+    double ultimate_strength_mpa; /* Su, engineering tensile strength */
+    double youngs_modulus_mpa;    /* E */
+    double yield_strength_mpa;    /* no method uses it; it is checked against Su and kept */
+    double hardness_hb;           /* Brinell */
+    double reduction_of_area;     /* RA, a ratio below 1 */
+    double fracture_strain;       /* D, true; where it is unknown D = ln(1/(1 - RA)) */
+    double fracture_stress_mpa;   /* true; where it is unknown Su (1 + D) */
 } nw_estimate_input;
+
+/* An input of which only the group is known. */
+NW_API nw_estimate_input nw_estimate_input_unknown(nw_group group);
+
+/* What a material says of itself, for an estimate. */
+NW_API nw_estimate_input nw_estimate_input_of(const nw_material *material);
+
+/* True fracture strain D: as given, else from reduction of area; NAN when neither is known. */
+NW_API double nw_estimate_fracture_strain(const nw_estimate_input *input);
+
+/* True fracture stress [MPa]: as given, else Su (1 + D) (Manson, Exp. Mech. 5 (1965) 193, from memory); NAN
+ * when neither is known. */
+NW_API double nw_estimate_fracture_stress_mpa(const nw_estimate_input *input);
+
+/* Tensile strength of a steel from its hardness, 0.0012 HB^2 + 3.3 HB [MPa] (Roessle & Fatemi, Int. J. Fatigue
+ * 22 (2000) 495, from memory). */
+NW_API double nw_ultimate_from_hardness_mpa(double hardness_hb);
+
+/* Refuses what cannot be: values not above 0, RA of 1 or more, yield above Su, Su above E/10, fracture
+ * stress below Su. Every fault is added. Returns NW_OK or NW_INPUT. */
+NW_API nw_status nw_estimate_input_check(const nw_estimate_input *input,
+                                         nw_diagnostics *diagnostics);
 
 typedef struct nw_estimate_values {
     double fatigue_strength_coefficient_mpa;
@@ -116,17 +143,32 @@ typedef struct nw_estimate_values {
     double fatigue_ductility_exponent;
     double strength_coefficient_mpa;
     double hardening_exponent;
-    double endurance_strain_amplitude; /* NAN when the method gives none */
+    nw_origin cyclic_curve_origin; /* NW_FROM_ESTIMATE: the method's own; else NW_COMPATIBILITY */
+    double endurance_stress_mpa;   /* NAN when the method gives none, as the next two */
+    double endurance_strain_amplitude;
     double endurance_cycles;
 } nw_estimate_values;
+
+/* Inputs that a method needs, as bits. */
+enum {
+    NW_NEEDS_ULTIMATE = 1u,
+    NW_NEEDS_MODULUS = 2u,
+    NW_NEEDS_HARDNESS = 4u,
+    NW_NEEDS_FRACTURE_STRAIN = 8u /* or reduction of area */
+};
 
 typedef struct nw_estimate {
     const char *key;       /* "uniform_material_law" */
     const char *title;     /* "Uniform material law" */
     const char *range;     /* what it was made for, in words */
+    const char *equation;  /* with the symbols of nw_estimate_input */
     const char *reference; /* published source */
-    /* False with the reason in `why` when the method does not apply. */
-    bool (*applies)(const nw_estimate_input *input, char *why, size_t capacity);
+    const char *accuracy;  /* what is reported about it */
+    const char *doubt;     /* what about its published form could not be confirmed, or NULL */
+    unsigned groups;       /* bits 1u << nw_group */
+    unsigned needs;        /* bits NW_NEEDS_... */
+    /* False with the reason in `why` beyond its range; NULL: none but groups and needs. */
+    bool (*limits)(const nw_estimate_input *input, char *why, size_t capacity);
     void (*evaluate)(const nw_estimate_input *input, nw_estimate_values *values);
 } nw_estimate;
 
@@ -135,6 +177,30 @@ NW_API const nw_estimate *nw_estimate_at(size_t index);
 
 /* The record of a key, or NULL. */
 NW_API const nw_estimate *nw_estimate_find(const char *key);
+
+/* Whether a method applies: made for the group, its inputs known, within its range, and its values of use
+ * (positive coefficients, c < b < 0, n' from 0.005 to 0.6).
+ *   why     receives the reason when it does not, `capacity` characters
+ *   values  receives the values when it does; may be NULL */
+NW_API bool nw_estimate_apply(const nw_estimate *record, const nw_estimate_input *input,
+                              nw_estimate_values *values, char *why, size_t capacity);
+
+/* The method to prefer among those that apply, by the published comparisons, or NULL when none applies.
+ *   because  receives the reason (a static string); may be NULL */
+NW_API const nw_estimate *nw_estimate_recommended(const nw_estimate_input *input,
+                                                  const char **because);
+
+/* "ultimate strength 820 MPa, Young's modulus 206 GPa, ...": the inputs that a method uses and where derived
+ * ones come from. Returns `text`. */
+NW_API char *nw_estimate_inputs_text(const nw_estimate *record, const nw_estimate_input *input,
+                                     char *text, size_t capacity);
+
+/* The material that a method gives, basis "estimated", source and note naming method, inputs, range and
+ * accuracy.
+ * Returns NW_OK, or NW_INPUT with the reason when the method does not apply. */
+NW_API nw_status nw_estimate_material(const nw_estimate *record, const nw_estimate_input *input,
+                                      const char *name, nw_material *material,
+                                      nw_diagnostics *diagnostics);
 
 /* Stress amplitude on the cyclic curve at which the plastic strain is 0.2 %: K' 0.002^n' [MPa]. */
 NW_API double nw_material_cyclic_yield_mpa(const nw_material *material);

@@ -20,6 +20,7 @@ struct nw_tracker {
     void *sink_data;
     double weight;
     nw_extremes extremes;
+    nw_status failure; /* of the sink, where advance() returns NULL */
     size_t waiting;
     nw_loop loops[LOOP_BUFFER];
 };
@@ -111,41 +112,43 @@ static void widen(nw_extremes *extremes, const nw_local_point *point)
     extremes->load_min_mpa = fmin(extremes->load_min_mpa, point->load_mpa);
 }
 
-static void go_on_initial(nw_tracker *tracker, double load, uint64_t id)
+static nw_local_point *go_on_initial(nw_tracker *tracker, double load, uint64_t id)
 {
     tracker->stack[1] = on_initial_curve(tracker->curve, load, id);
     tracker->stack[0].load_mpa = -load;
     tracker->top = 1;
     widen(&tracker->extremes, &tracker->stack[1]);
+    return &tracker->stack[1];
 }
 
-/* From the last point of the stack to `load`: closes what closes on the way and puts the point reached on
- * the stack, for which there must be room. `rising` and `in_bins` are constants where this is inlined: the
- * comparison then is one instruction, and the curve is looked up without asking what kind it is. */
-static inline __attribute__((always_inline)) nw_status
-advance(nw_tracker *tracker, double load, uint64_t id, bool rising, bool in_bins)
+/* From `top`, the last point of the stack, to `load`: closes what closes on the way and puts the point reached
+ * on the stack, for which there must be room. Returns it, or NULL when the sink failed. `rising` and `in_bins`
+ * are constants where this is inlined: the comparison then is one instruction, and the curve is looked up
+ * without asking what kind it is. The top travels in a register: from memory it would lengthen the one chain
+ * of dependent steps there is. */
+static inline __attribute__((always_inline)) nw_local_point *advance(nw_tracker *tracker,
+                                                                     nw_local_point *top,
+                                                                     double load, uint64_t id,
+                                                                     bool rising, bool in_bins)
 {
     nw_local_point *const base = tracker->stack;
-    nw_local_point *top = base + tracker->top;
     while (rising ? load >= top[-1].load_mpa : load <= top[-1].load_mpa) {
         if (top == base + 1) { /* M3, unless just at the mirror image */
             if (fabs(load) > fabs(top->load_mpa)) {
-                go_on_initial(tracker, load, id);
-                return NW_OK;
+                return go_on_initial(tracker, load, id);
             }
             break;
         }
         tracker->loops[tracker->waiting++] = (nw_loop){top[-1], top[0]};
         top -= 2;
         if (tracker->waiting == LOOP_BUFFER) {
-            nw_status status = nw_tracker_flush(tracker);
-            if (status != NW_OK) {
-                return status;
+            tracker->failure = nw_tracker_flush(tracker);
+            if (tracker->failure != NW_OK) {
+                return NULL;
             }
         }
         if (top == base) { /* M1; otherwise M2: the branch from `top` goes on */
-            go_on_initial(tracker, load, id);
-            return NW_OK;
+            return go_on_initial(tracker, load, id);
         }
     }
     double half_range = rising ? 0.5 * (load - top->load_mpa) : 0.5 * (top->load_mpa - load);
@@ -157,7 +160,15 @@ advance(nw_tracker *tracker, double load, uint64_t id, bool rising, bool in_bins
     top[1].load_mpa = load;
     memcpy(&top[1].stress_mpa, &reached, sizeof reached);
     top[1].id = id;
-    tracker->top = (size_t)(top - base) + 1;
+    return top + 1;
+}
+
+static nw_status keep_top(nw_tracker *tracker, const nw_local_point *top)
+{
+    if (top == NULL) {
+        return tracker->failure;
+    }
+    tracker->top = (size_t)(top - tracker->stack);
     return NW_OK;
 }
 
@@ -183,22 +194,22 @@ static inline __attribute__((always_inline)) nw_status advance_all(nw_tracker *t
                                                                    size_t count, uint64_t first_id,
                                                                    bool rising, bool in_bins)
 {
+    nw_local_point *top = tracker->stack + tracker->top;
     size_t i = 0;
-    nw_status status = NW_OK;
     if (!rising && count > 0) {
-        status = advance(tracker, points[0].load_mpa, first_id, false, in_bins);
+        top = advance(tracker, top, points[0].load_mpa, first_id, false, in_bins);
         i = 1;
     }
-    for (; i + 1 < count && status == NW_OK; i += 2) {
-        status = advance(tracker, points[i].load_mpa, first_id + i, true, in_bins);
-        if (status == NW_OK) {
-            status = advance(tracker, points[i + 1].load_mpa, first_id + i + 1, false, in_bins);
+    for (; i + 1 < count && top != NULL; i += 2) {
+        top = advance(tracker, top, points[i].load_mpa, first_id + i, true, in_bins);
+        if (top != NULL) {
+            top = advance(tracker, top, points[i + 1].load_mpa, first_id + i + 1, false, in_bins);
         }
     }
-    if (i < count && status == NW_OK) {
-        status = advance(tracker, points[i].load_mpa, first_id + i, true, in_bins);
+    if (i < count && top != NULL) {
+        top = advance(tracker, top, points[i].load_mpa, first_id + i, true, in_bins);
     }
-    return status;
+    return keep_top(tracker, top);
 }
 
 /* The part stays on the initial curve when it moves on away from zero. */
@@ -226,8 +237,10 @@ nw_status nw_tracker_move(nw_tracker *tracker, double load_mpa, uint64_t id)
     if (status != NW_OK) {
         return status;
     }
-    status = rising ? advance(tracker, load_mpa, id, true, false)
-                    : advance(tracker, load_mpa, id, false, false);
+    nw_local_point *top = tracker->stack + tracker->top;
+    top = rising ? advance(tracker, top, load_mpa, id, true, false)
+                 : advance(tracker, top, load_mpa, id, false, false);
+    status = keep_top(tracker, top);
     /* The load may go on from here, and then this point is in no loop. */
     widen(&tracker->extremes, &tracker->stack[tracker->top]);
     return status;
