@@ -11,9 +11,10 @@
 
 static nw_status path_fault(nw_diagnostics *diagnostics, const char *path, const char *what)
 {
+    const char *reason = errno == 0 ? "an earlier write failed" : strerror(errno);
     nw_place place = {.line = 0};
     nw_text_copy(place.file, sizeof place.file, path);
-    return nw_fault(diagnostics, NW_FILE, &place, NULL, "cannot be %s: %s", what, strerror(errno));
+    return nw_fault(diagnostics, NW_FILE, &place, NULL, "cannot be %s: %s", what, reason);
 }
 
 static nw_status read_stream(FILE *stream, const char *path, size_t limit, char **text,

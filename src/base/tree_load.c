@@ -10,6 +10,7 @@
 
 typedef struct loader {
     yaml_parser_t parser;
+    const char *text;
     const char *file;
     nw_diagnostics *diagnostics;
     bool duplicate_found;
@@ -25,6 +26,17 @@ static nw_status out_of_memory(const loader *in)
     return nw_fault(in->diagnostics, NW_MEMORY, NULL, NULL, "out of memory reading %s", in->file);
 }
 
+/* Text that is no UTF-8 is reported by byte offset only. */
+static yaml_mark_t mark_of_offset(const char *text, size_t offset)
+{
+    yaml_mark_t mark = {.index = offset};
+    for (size_t i = 0; i < offset; i++) {
+        mark.line += text[i] == '\n';
+        mark.column = text[i] == '\n' ? 0 : mark.column + 1;
+    }
+    return mark;
+}
+
 static nw_status parser_fault(const loader *in)
 {
     const yaml_parser_t *parser = &in->parser;
@@ -33,8 +45,7 @@ static nw_status parser_fault(const loader *in)
     }
     yaml_mark_t mark = parser->problem_mark;
     if (parser->error == YAML_READER_ERROR) {
-        mark.line = parser->mark.line;
-        mark.column = parser->mark.column;
+        mark = mark_of_offset(in->text, parser->problem_offset);
     }
     nw_place place = mark_place(in, mark);
     return nw_fault(in->diagnostics, NW_INPUT, &place, NULL, "not valid YAML: %s%s%s",
@@ -253,7 +264,7 @@ nw_status nw_tree_parse(const char *text, size_t length, const char *file, nw_no
                         nw_diagnostics *diagnostics)
 {
     *root = NULL;
-    loader in = {.file = file, .diagnostics = diagnostics};
+    loader in = {.text = text, .file = file, .diagnostics = diagnostics};
     if (!yaml_parser_initialize(&in.parser)) {
         return out_of_memory(&in);
     }

@@ -84,7 +84,12 @@ static size_t column_of(const text_file *file, const char *p)
 static nw_status field_fault(const text_file *file, const nw_input *input, nw_text_field field,
                              nw_diagnostics *diagnostics)
 {
+    char shown[41];
     int length = field.end - field.start > 40 ? 40 : (int)(field.end - field.start);
+    for (int i = 0; i < length; i++) {
+        shown[i] = (unsigned char)field.start[i] < ' ' ? '?' : field.start[i];
+    }
+    shown[length] = '\0';
     const char *hint = "";
     if (file->layout.decimal == '.' && memchr(field.start, ',', (size_t)length) != NULL) {
         hint = " (decimal commas need  decimal: \",\")";
@@ -94,7 +99,7 @@ static nw_status field_fault(const text_file *file, const nw_input *input, nw_te
                               diagnostics, "found an empty field, expected a finite number");
     }
     return nw_input_fault(input, file->line, column_of(file, field.start), NW_INPUT, diagnostics,
-                          "found '%.*s', expected a finite number%s", length, field.start, hint);
+                          "found '%s', expected a finite number%s", shown, hint);
 }
 
 /* One line in full generality. *taken tells whether it held a sample. */

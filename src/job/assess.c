@@ -20,6 +20,7 @@ typedef struct run {
     nw_tracker *tracker;
     nw_tally tally;
     double first_damage, first_damage_above;
+    bool header_unit_overridden;
 } run;
 
 static nw_status no_memory(run *r)
@@ -43,7 +44,8 @@ static nw_status read_events(run *r)
 {
     r->events = calloc(r->input->load_count, sizeof *r->events);
     return r->events == NULL ? no_memory(r)
-                             : nw_case_events(r->input, r->options, r->events, r->diagnostics);
+                             : nw_case_events(r->input, r->options, r->events,
+                                              &r->header_unit_overridden, r->diagnostics);
 }
 
 /* The largest |L| that a branch or the initial curve can reach. */
@@ -192,6 +194,23 @@ static double life_of(double first, double repeating, double damage_sum)
     return repeating > 0.0 ? 1.0 + (damage_sum - first) / repeating : INFINITY;
 }
 
+/* Largest |nominal stress| of the events; NAN when no event tells it. */
+static double largest_nominal(const run *r)
+{
+    const nw_case *input = r->input;
+    double nominal = NAN;
+    for (size_t i = 0; i < input->load_count; i++) {
+        nw_load_kind kind = input->loads[i].kind;
+        double factor = kind == NW_NOMINAL_STRESS         ? input->factor
+                        : kind == NW_NOTCH_ELASTIC_STRESS ? input->kt
+                                                          : NAN;
+        double high = r->events[i].load_max_mpa - input->residual_stress_mpa;
+        double low = r->events[i].load_min_mpa - input->residual_stress_mpa;
+        nominal = fmax(nominal, fmax(fabs(high), fabs(low)) / factor);
+    }
+    return nominal;
+}
+
 static void fill_block(const run *r, nw_assessment *result)
 {
     for (size_t i = 0; i < r->input->load_count; i++) {
@@ -203,10 +222,7 @@ static void fill_block(const run *r, nw_assessment *result)
     result->loops_total = r->tally.loops;
     result->left_out = r->tally.left_out;
     result->turning_points = 2.0 * (r->tally.loops + r->tally.left_out.loops);
-    bool nominal = !isnan(r->input->factor) && r->input->loads[0].kind != NW_NOTCH_STRAIN;
-    double offset = r->input->residual_stress_mpa;
-    double largest = fmax(fabs(result->load_max_mpa - offset), fabs(result->load_min_mpa - offset));
-    result->nominal_max_mpa = nominal ? largest / r->input->factor : NAN;
+    result->nominal_max_mpa = largest_nominal(r);
 }
 
 static void fill_damage(const run *r, nw_assessment *result)
@@ -278,9 +294,9 @@ static nw_status fill(run *r, nw_assessment *result)
     fill_damage(r, result);
     nw_status status = fill_loops(r, result);
     nw_assess_evidence evidence = {
-        .strain_amplitude_max = r->tally.strain_amplitude_max,
         .stress_mean_max_mpa = r->tally.stress_mean_max_mpa,
         .rate_max = r->tally.rate_max,
+        .header_unit_overridden = r->header_unit_overridden,
         .curve_exceeded =
             result->rule->is_table && largest_load(r) > nw_notch_curve_load_max_mpa(r->curve),
     };

@@ -6,9 +6,9 @@
 
 /* What cautions are drawn from, beyond the result itself. */
 typedef struct nw_assess_evidence {
-    double strain_amplitude_max; /* of all loops */
     double stress_mean_max_mpa;
-    double rate_max; /* largest 1/N */
+    double rate_max;             /* largest 1/N */
+    bool header_unit_overridden; /* a column's own unit gave way to a scale */
     bool curve_exceeded;
 } nw_assess_evidence;
 

@@ -101,7 +101,8 @@ static void resolve_endurance(nw_field_reader *reader, const nw_node *root, nw_c
 
 static void check_survival(nw_field_reader *reader, const nw_node *root, const nw_case *result)
 {
-    if (result->survival != 0.5 && isnan(result->material.log10_life_sd)) {
+    bool sensible = result->survival > 0.0 && result->survival < 1.0;
+    if (sensible && result->survival != 0.5 && isnan(result->material.log10_life_sd)) {
         nw_field_fault(
             reader, node_for(root, "life", "survival"), "life", "survival",
             "found %g %%, but the material gives no scatter (log10_life_sd); expected 50 %%",

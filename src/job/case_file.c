@@ -22,8 +22,10 @@ typedef struct top {
 } top;
 
 static const nw_field top_rows[] = {
-    {"notchwright", NW_FIELD_COUNT, NW_PURE, offsetof(top, format), 0, true, 1.0, 1.5, false, false,
-     NULL},
+    {.key = "notchwright",
+     .kind = NW_FIELD_COUNT,
+     .offset = offsetof(top, format),
+     .required = true},
     {.key = "title", .kind = NW_FIELD_TEXT, .offset = offsetof(top, title), .size = 240},
     {.key = "units", .kind = NW_FIELD_OTHER},
     {.key = "material", .kind = NW_FIELD_OTHER, .required = true},
@@ -94,6 +96,11 @@ static nw_status read_tree(const nw_node *root, nw_case *result, nw_diagnostics 
     nw_fields_read(&reader, root, "", top_rows, &values);
     if (root->kind != NW_NODE_MAP) {
         return reader.status;
+    }
+    if (!isnan(values.format) && values.format != 1.0) {
+        nw_field_fault(&reader, nw_node_entry(root, "notchwright"), "", "notchwright",
+                       "found case format %g, expected 1, the one this version reads",
+                       values.format);
     }
     nw_text_copy(result->title, sizeof result->title, values.title);
     if (nw_default_units_from_tree(root, "", &units, diagnostics) != NW_OK) {

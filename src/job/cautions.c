@@ -20,6 +20,11 @@ static void material_cautions(const nw_case *input, nw_cautions *out)
                        "estimates (%.200s).",
                        m->source);
     }
+    if (m->basis == NW_BASIS_UNSTATED) {
+        nw_caution_add(out, "basis_unstated", "life_blocks",
+                       "The case does not say where its material values come from (basis: tested, "
+                       "handbook or estimated).");
+    }
     if (m->hardening_exponent_origin == NW_COMPATIBILITY ||
         m->strength_coefficient_origin == NW_COMPATIBILITY) {
         bool both = m->hardening_exponent_origin == m->strength_coefficient_origin;
@@ -41,7 +46,18 @@ static void material_cautions(const nw_case *input, nw_cautions *out)
     }
 }
 
-static void load_cautions(const nw_case *input, nw_assessment *result)
+static bool has_nominal_load(const nw_case *input)
+{
+    for (size_t i = 0; i < input->load_count; i++) {
+        if (input->loads[i].kind == NW_NOMINAL_STRESS) {
+            return true;
+        }
+    }
+    return false;
+}
+
+static void load_cautions(const nw_case *input, const nw_assess_evidence *evidence,
+                          nw_assessment *result)
 {
     nw_cautions *out = &result->cautions;
     double yield = nw_material_cyclic_yield_mpa(&input->material);
@@ -57,24 +73,30 @@ static void load_cautions(const nw_case *input, nw_assessment *result)
                 ? ""
                 : ", where this notch rule is known to give too little strain");
     }
-    if (rule->needs_limit_load_ratio && result->load_max_mpa / input->limit_load_ratio > yield) {
+    double largest = fmax(fabs(result->load_max_mpa), fabs(result->load_min_mpa));
+    if (rule->needs_limit_load_ratio && largest / input->limit_load_ratio > yield) {
         nw_caution_add(
             out, "limit_load", "extremes",
             "The load goes past the limit load of the net section (L/Kp = %.0f MPa, cyclic "
             "yield stress %.0f MPa).",
-            result->load_max_mpa / input->limit_load_ratio, yield);
+            largest / input->limit_load_ratio, yield);
     }
     if (input->loads[0].kind == NW_NOTCH_STRAIN) {
         nw_caution_add(
             out, "strain_measured", "extremes",
             "Strain was measured at the root, so %s; stress follows from the cyclic curve.",
             input->rule_given ? "the notch rule of the case is not used" : "no notch rule is used");
-    } else if (!isnan(input->kf)) {
+    } else if (!isnan(input->kf) && has_nominal_load(input)) {
         nw_caution_add(
             out, "kf_in_use", "extremes",
             "Kf = %.3g replaces Kt in the notch rule: local stress and strain are those of "
             "an equivalent notch, not the ones a gauge would show.",
             input->kf);
+    }
+    if (evidence->header_unit_overridden) {
+        nw_caution_add(out, "header_unit_overridden", "extremes",
+                       "A history's header gives its column a unit, but the case gives a different "
+                       "scale, which was used. Check which of the two is right.");
     }
     if (fmax(fabs(result->extremes.strain_max), fabs(result->extremes.strain_min)) > 0.05) {
         nw_caution_add(out, "large_strain", "extremes",
@@ -83,10 +105,35 @@ static void load_cautions(const nw_case *input, nw_assessment *result)
     if (result->left_out.loops > 0.0) {
         nw_caution_add(
             out, "small_ranges_left_out", "damage_per_block",
-            "%.0f closed loops a block were left out (ignore_ranges_below); they would have "
+            "%.0f closed loop(s) a block were left out (ignore_ranges_below); they would have "
             "done %.3g damage a block beside the %.3g counted.",
             result->left_out.loops, result->left_out.damage, result->damage_per_block);
     }
+}
+
+static double strain_of(const nw_loop_result *loop)
+{
+    return loop->values.strain_amplitude;
+}
+
+static double cycles_of(const nw_loop_result *loop)
+{
+    return loop->cycles;
+}
+
+/* Damage from outside a range is said from this share on. */
+static const double share_worth_saying = 0.05;
+
+/* Share of the damage done by loops (of those kept, the worst) outside [low, high]; 0 without a range. */
+static double share_outside(const nw_assessment *result, double (*value)(const nw_loop_result *),
+                            const double range[2])
+{
+    double share = 0.0;
+    for (size_t i = 0; i < result->loop_count; i++) {
+        double at = value(&result->loops[i]);
+        share += at < range[0] || at > range[1] ? result->loops[i].share : 0.0;
+    }
+    return share;
 }
 
 static void range_cautions(const nw_case *input, const nw_assess_evidence *evidence,
@@ -94,20 +141,21 @@ static void range_cautions(const nw_case *input, const nw_assess_evidence *evide
 {
     nw_cautions *out = &result->cautions;
     const nw_material *m = &input->material;
-    if (evidence->strain_amplitude_max > m->valid_strain_amplitude[1]) {
-        nw_caution_add(out, "outside_tested_strain", "life_blocks",
-                       "The largest strain amplitude, %.4g, is above the range of the tests (up to "
-                       "%.4g).",
-                       evidence->strain_amplitude_max, m->valid_strain_amplitude[1]);
+    double beside_strain = share_outside(result, strain_of, m->valid_strain_amplitude);
+    if (beside_strain > share_worth_saying) {
+        nw_caution_add(
+            out, "outside_tested_strain", "life_blocks",
+            "%.0f %% of the damage comes from loops with strain amplitudes outside the range "
+            "of the tests (%.4g to %.4g): extrapolated.",
+            100.0 * beside_strain, m->valid_strain_amplitude[0], m->valid_strain_amplitude[1]);
     }
-    const nw_loop_result *worst = result->loop_count > 0 ? &result->loops[0] : NULL;
-    if (worst != NULL && isfinite(worst->cycles) &&
-        (worst->cycles > m->valid_cycles[1] || worst->cycles < m->valid_cycles[0])) {
+    double beside_life = share_outside(result, cycles_of, m->valid_cycles);
+    if (beside_life > share_worth_saying) {
         nw_caution_add(
             out, "outside_tested_life", "life_blocks",
-            "The most damaging loop lasts %.3g cycles, outside the range of the tests (%.3g "
-            "to %.3g cycles): extrapolated.",
-            worst->cycles, m->valid_cycles[0], m->valid_cycles[1]);
+            "%.0f %% of the damage comes from loops with lives outside the range of the tests "
+            "(%.3g to %.3g cycles): extrapolated.",
+            100.0 * beside_life, m->valid_cycles[0], m->valid_cycles[1]);
     }
     if (evidence->rate_max > 2.0) {
         nw_caution_add(
@@ -188,7 +236,7 @@ void nw_assess_cautions(const nw_case *input, const nw_assess_evidence *evidence
                         nw_assessment *result)
 {
     material_cautions(input, &result->cautions);
-    load_cautions(input, result);
+    load_cautions(input, evidence, result);
     range_cautions(input, evidence, result);
     life_cautions(input, result);
 }

@@ -22,14 +22,16 @@ static double load_per_quantity(const nw_case *input, const nw_load *load)
 }
 
 static nw_status resolve_scale(const nw_load *load, const char *unit, double *scale,
-                               nw_diagnostics *diagnostics)
+                               bool *overridden, nw_diagnostics *diagnostics)
 {
+    nw_dimension dimension = load->kind == NW_NOTCH_STRAIN ? NW_STRAIN : NW_STRESS;
+    bool header_tells = nw_unit_factor(unit, dimension, scale);
     if (!isnan(load->scale)) {
+        *overridden |= header_tells && *scale != load->scale;
         *scale = load->scale;
         return NW_OK;
     }
-    nw_dimension dimension = load->kind == NW_NOTCH_STRAIN ? NW_STRAIN : NW_STRESS;
-    if (nw_unit_factor(unit, dimension, scale)) {
+    if (header_tells) {
         return NW_OK;
     }
     return nw_fault(
@@ -40,10 +42,11 @@ static nw_status resolve_scale(const nw_load *load, const char *unit, double *sc
 }
 
 static nw_status start_finder(const nw_case *input, const nw_load *load, const char *unit,
-                              nw_turning_finder *finder, nw_diagnostics *diagnostics)
+                              nw_turning_finder *finder, bool *overridden,
+                              nw_diagnostics *diagnostics)
 {
     double scale, factor = load_per_quantity(input, load);
-    nw_status status = resolve_scale(load, unit, &scale, diagnostics);
+    nw_status status = resolve_scale(load, unit, &scale, overridden, diagnostics);
     if (status == NW_OK) {
         *finder = (nw_turning_finder){.scale = scale * factor,
                                       .offset = load->offset * factor + input->residual_stress_mpa};
@@ -61,10 +64,11 @@ static void tell_progress(const nw_assess_options *options, const nw_load *load,
 
 static nw_status stream_file(const nw_case *input, const nw_assess_options *options,
                              const nw_load *load, nw_history *history, nw_event *event,
-                             nw_diagnostics *diagnostics)
+                             bool *overridden, nw_diagnostics *diagnostics)
 {
     nw_turning_finder finder;
-    nw_status status = start_finder(input, load, nw_history_unit(history), &finder, diagnostics);
+    nw_status status =
+        start_finder(input, load, nw_history_unit(history), &finder, overridden, diagnostics);
     double *values = malloc(BATCH * sizeof *values);
     if (values == NULL) {
         return nw_fault(diagnostics, NW_MEMORY, NULL, NULL, "out of memory reading %s",
@@ -85,13 +89,14 @@ static nw_status stream_file(const nw_case *input, const nw_assess_options *opti
 }
 
 static nw_status read_file(const nw_case *input, const nw_assess_options *options,
-                           const nw_load *load, nw_event *event, nw_diagnostics *diagnostics)
+                           const nw_load *load, nw_event *event, bool *overridden,
+                           nw_diagnostics *diagnostics)
 {
     nw_history_options how = {load->column[0] == '\0' ? NULL : load->column, load->decimal};
     nw_history *history = NULL;
     nw_status status = nw_history_open(load->history, &how, &history, diagnostics);
     if (status == NW_OK) {
-        status = stream_file(input, options, load, history, event, diagnostics);
+        status = stream_file(input, options, load, history, event, overridden, diagnostics);
     }
     nw_history_close(history);
     return status;
@@ -101,7 +106,8 @@ static nw_status read_inline(const nw_case *input, const nw_load *load, nw_event
                              nw_diagnostics *diagnostics)
 {
     nw_turning_finder finder;
-    nw_status status = start_finder(input, load, "", &finder, diagnostics);
+    bool overridden = false;
+    nw_status status = start_finder(input, load, "", &finder, &overridden, diagnostics);
     if (status == NW_OK) {
         status = nw_event_feed(event, &finder, load->values, load->value_count);
     }
@@ -142,9 +148,10 @@ static bool has_reversal(const nw_event *events, size_t count)
 }
 
 nw_status nw_case_events(const nw_case *input, const nw_assess_options *options, nw_event *events,
-                         nw_diagnostics *diagnostics)
+                         bool *header_unit_overridden, nw_diagnostics *diagnostics)
 {
     nw_status status = NW_OK;
+    *header_unit_overridden = false;
     memset(events, 0, input->load_count * sizeof *events);
     for (size_t i = 0; i < input->load_count; i++) {
         const nw_load *load = &input->loads[i];
@@ -152,9 +159,9 @@ nw_status nw_case_events(const nw_case *input, const nw_assess_options *options,
         events[i].ignore_ranges_below_mpa =
             load->ignore_ranges_below_mpa *
             (load->kind == NW_NOTCH_STRAIN ? input->material.youngs_modulus_mpa : 1.0);
-        nw_status one = load->values != NULL
-                            ? read_inline(input, load, &events[i], diagnostics)
-                            : read_file(input, options, load, &events[i], diagnostics);
+        nw_status one = load->values != NULL ? read_inline(input, load, &events[i], diagnostics)
+                                             : read_file(input, options, load, &events[i],
+                                                         header_unit_overridden, diagnostics);
         if (one == NW_OK) {
             one = check_finite(load, &events[i], diagnostics);
         }

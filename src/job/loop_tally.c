@@ -115,19 +115,16 @@ static nw_status tally_batch(nw_tally *tally, nw_loop *loops, size_t count, doub
     if (tally->any_gate) {
         count = leave_out(tally, loops, rates, count, weight);
     }
-    double sum = 0.0, strain = tally->strain_amplitude_max, mean = tally->stress_mean_max_mpa;
+    double sum = 0.0, mean = tally->stress_mean_max_mpa;
     double fastest = tally->rate_max;
     for (size_t i = 0; i < count; i++) {
-        double range = fabs(loops[i].start.strain - loops[i].tip.strain);
         double middle = loops[i].start.stress_mpa + loops[i].tip.stress_mpa;
         sum += rates[i];
-        strain = 0.5 * range > strain ? 0.5 * range : strain;
         mean = 0.5 * middle > mean ? 0.5 * middle : mean;
         fastest = rates[i] > fastest ? rates[i] : fastest;
     }
     tally->damage += weight * sum;
     tally->loops += weight * (double)count;
-    tally->strain_amplitude_max = strain;
     tally->stress_mean_max_mpa = mean;
     tally->rate_max = fastest;
     if (!isnan(tally->endurance)) {

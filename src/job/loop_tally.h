@@ -25,7 +25,7 @@ typedef struct nw_tally {
     double loops;
     bool exceeded;
     nw_left_out left_out;
-    double strain_amplitude_max, stress_mean_max_mpa, rate_max;
+    double stress_mean_max_mpa, rate_max;
 
     /* Damages of the most damaging single loops, falling: [top_most] while `finds_top`. */
     bool finds_top;

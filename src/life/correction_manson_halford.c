@@ -18,7 +18,7 @@ const nw_correction nw_correction_manson_halford = {
     .key = "manson_halford",
     .title = "Manson-Halford",
     .equation = "ea = ((sf'-sm)/E)(2N)^b + ef' ((sf'-sm)/sf')^(c/b) (2N)^c",
-    .reference = "Manson & Halford, Eng. Fract. Mech. 15 (1981) 35",
+    .reference = "Manson & Halford, Int. J. Fract. 17 (1981) 169 (from memory)",
     .terms = nw_strain_terms,
     .prepare = prepare,
 };

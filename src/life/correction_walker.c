@@ -18,9 +18,8 @@ const nw_correction nw_correction_walker = {
     .key = "walker",
     .title = "Walker",
     .equation = "ea = (sf'/E) k^(1-g) (2N)^b + ef' k^(c(1-g)/b) (2N)^c, k = (1-R)/2",
-    .reference =
-        "Walker, ASTM STP 462 (1970) 1; Dowling, Calhoun & Arcari, Fatigue Fract. Eng. Mater. "
-        "Struct. 32 (2009) 163",
+    .reference = "Walker, ASTM STP 462 (1970) 1; strain form: Dowling, Fatigue Fract. Eng. Mater. "
+                 "Struct. 32 (2009) 1004",
     .uses_walker_gamma = true,
     .terms = nw_strain_terms,
     .prepare = prepare,

@@ -114,16 +114,16 @@ static const nw_field valid_rows[] = {
     {.key = NULL},
 };
 
-/* Strain coefficients are ratios that people write bare (ef' = 0.26), so a bare ratio is right there. */
+/* Strain coefficients are ratios that people write bare (ef' = 0.26), so a bare ratio is right there; unless
+ * the file makes another strain unit the default: then a bare number could mean either and is refused. */
 static nw_default_units with_bare_strain(const nw_default_units *defaults)
 {
     nw_default_units units = {{NULL}};
     if (defaults != NULL) {
         units = *defaults;
     }
-    if (units.unit[NW_STRAIN] == NULL) {
-        units.unit[NW_STRAIN] = "ratio";
-    }
+    bool other = units.unit[NW_STRAIN] != NULL && strcmp(units.unit[NW_STRAIN], "ratio") != 0;
+    units.unit[NW_STRAIN] = other ? NULL : "ratio";
     return units;
 }
 

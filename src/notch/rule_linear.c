@@ -17,6 +17,7 @@ const nw_notch_rule nw_notch_rule_linear = {
     .key = "linear",
     .title = "Linear (strain concentration as elastic)",
     .equation = "e = L/E",
-    .reference = "Gowhari-Anaraki & Hardy, J. Strain Anal. 26 (1991) 1 (from memory)",
+    .reference =
+        "Stephens, Fatemi, Stephens & Fuchs, Metal Fatigue in Engineering, 2nd ed., Wiley 2001",
     .residual = residual,
 };

@@ -92,9 +92,9 @@ static void write_damage(FILE *to, const nw_case *input, const nw_assessment *re
 
 static void write_load(FILE *to, const nw_case *input, const nw_assessment *result)
 {
-    fprintf(to, "Block    %zu event%s, %.0f samples, %.0f reversals, %.0f closed loops a block\n",
+    fprintf(to, "Block    %zu event%s, %.0f samples, %.0f reversals, %.0f closed loop%s a block\n",
             input->load_count, input->load_count == 1 ? "" : "s", result->samples,
-            result->turning_points, result->loops_total);
+            result->turning_points, result->loops_total, result->loops_total == 1.0 ? "" : "s");
     fprintf(to, "Load     notch stress if all were elastic: %.1f to %.1f MPa", result->load_min_mpa,
             result->load_max_mpa);
     if (!isnan(result->nominal_max_mpa)) {
@@ -147,8 +147,11 @@ static void write_loop(FILE *to, const nw_case *input, const nw_loop_result *loo
 static void write_loops(FILE *to, const nw_case *input, const nw_assessment *result)
 {
     size_t shown = result->loop_count < 10 ? result->loop_count : 10;
-    fprintf(to, "\nThe %zu most damaging loop%s of the repeating block\n", shown,
-            shown == 1 ? "" : "s");
+    if (shown == 1) {
+        fputs("\nThe loop of the repeating block\n", to);
+    } else {
+        fprintf(to, "\nThe %zu most damaging loops of the repeating block\n", shown);
+    }
     fputs("        share    count   strain  stress  stress   life of   where they peak\n"
           "   no       %    /block   ampl. %  max MPa mean MPa  cycles   (sample counts from 1)\n",
           to);

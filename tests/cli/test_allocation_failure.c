@@ -23,18 +23,19 @@ static const char curve[] = CASE_HEAD "load: [{history: [0, 200, -100], scale: 1
 typedef struct run {
     const char *name, *text;
     const char *options[9];
+    bool and_on_too; /* also without any memory from then on */
 } run;
 
 static const run runs[] = {
-    {"text", inline_and_file, {NULL}},
-    {"json", inline_and_file, {"--format", "json", NULL}},
-    {"csv", inline_and_file, {"--format", "csv", NULL}},
-    {"gzip", packed, {NULL}},
-    {"curve", curve, {"--set", "notch.rule=curve", "--set", "notch.curve=fe.csv", NULL}},
+    {"text", inline_and_file, {NULL}, false},
+    {"json", inline_and_file, {"--format", "json", NULL}, true},
+    {"gzip", packed, {NULL}, true},
+    {"curve", curve, {"--set", "notch.rule=curve", "--set", "notch.curve=fe.csv", NULL}, false},
     {"settings",
      curve,
      {"--set", "notch.rule=esed", "--set", "life.mean_stress=walker", "--set", "load.1.repeats=7",
-      NULL}},
+      NULL},
+     false},
 };
 enum { RUNS = sizeof runs / sizeof runs[0] };
 
@@ -178,7 +179,7 @@ static void every_allocation_may_fail(void **state)
     unsigned long count = count_calls(&scratch, r, &expected);
     for (unsigned long n = 1; n <= count; n++) {
         wrong += try_one(&scratch, r, (failure){n, false}, expected);
-        wrong += try_one(&scratch, r, (failure){n, true}, expected);
+        wrong += r->and_on_too ? try_one(&scratch, r, (failure){n, true}, expected) : 0;
     }
     test_result past = run_with(&scratch, r, (failure){count + 1, true});
     assert_int_equal(past.status, 0);

@@ -5,7 +5,7 @@
  * error where an argument stands at the edge of two bins. */
 #include "support/support.h"
 
-enum { CASES = 150, LONGEST = 30, TEXT = 16384 };
+enum { CASES = 100, LONGEST = 30, TEXT = 16384 };
 
 static const double agreed = 1e-9;
 

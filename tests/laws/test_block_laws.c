@@ -78,7 +78,8 @@ static void repeated(const test_part *part, const double *loads, size_t count, t
     for (size_t i = 0; i < repeats; i++) {
         memcpy(copies + i * count, loads, count * sizeof *loads);
     }
-    nw_event events[2] = {test_event(loads, count, (double)repeats), test_event(after, after_count, 1)};
+    nw_event events[2] = {test_event(loads, count, (double)repeats),
+                          test_event(after, after_count, 1)};
     test_part_damage(part, events, 2, damage, 2);
     nw_event_clear(&events[0]);
     events[0] = test_event(copies, repeats * count, 1.0);
@@ -142,8 +143,8 @@ static void filled_in(const test_part *part, const double *loads, size_t count, 
         for (int k = 0; k < more; k++) {
             at += (1.0 - at) * (test_random_int(random, 0, 3) * 0.25); /* never turns back */
             double value = loads[i] + at * (loads[i + 1] - loads[i]);
-            filled[used++] = fmin(fmax(value, fmin(loads[i], loads[i + 1])),
-                                  fmax(loads[i], loads[i + 1]));
+            filled[used++] =
+                fmin(fmax(value, fmin(loads[i], loads[i + 1])), fmax(loads[i], loads[i + 1]));
         }
     }
     damage_of(part, loads, count, damage);
@@ -209,10 +210,11 @@ static test_part aluminium_part(const char *correction)
                                .surface_factor = 1.0,
                                .surface_reversals = 1e6,
                                .life_factor = 1.0};
-    assert_int_equal(nw_notch_curve_build(nw_notch_rule_find("neuber"), &input, 800.0, &part.curve,
-                                          NULL),
+    assert_int_equal(
+        nw_notch_curve_build(nw_notch_rule_find("neuber"), &input, 800.0, &part.curve, NULL),
+        NW_OK);
+    assert_int_equal(nw_life_create(&part.material, &options, 0.02, 600.0, &part.life, NULL),
                      NW_OK);
-    assert_int_equal(nw_life_create(&part.material, &options, 0.02, 600.0, &part.life, NULL), NW_OK);
     return part;
 }
 

@@ -127,7 +127,8 @@ static void sweep_curve(test_random *random, point *p)
     assert_true(nw_notch_curve_error(curve) <= promised);
     for (int i = 0; i < LOADS; i++) {
         double stress, strain;
-        p->load = i == 0 ? most : most * pow(10.0, -test_random_between(random, 0.0, i < 6 ? 1 : 4));
+        p->load =
+            i == 0 ? most : most * pow(10.0, -test_random_between(random, 0.0, i < 6 ? 1 : 4));
         nw_notch_curve_at(curve, p->load, &stress, &strain);
         assert_point(p, stress, strain);
         assert_int_equal(nw_notch_rule_solve(rule, &p->material, p->load, &stress, &strain), NW_OK);
@@ -154,8 +155,8 @@ static void every_rule_solves_its_equation(void **state)
 static double strain_of(const char *rule, const nw_rule_input *input, double load, double *stress)
 {
     double strain;
-    assert_int_equal(
-        nw_notch_rule_solve(nw_notch_rule_find(rule), input, load, stress, &strain), NW_OK);
+    assert_int_equal(nw_notch_rule_solve(nw_notch_rule_find(rule), input, load, stress, &strain),
+                     NW_OK);
     return strain;
 }
 

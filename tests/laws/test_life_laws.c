@@ -118,8 +118,9 @@ static void solved_life_satisfies_its_equation(void **state)
             bool closed = v.stress_max_mpa <= 0.0 && (i % 5 == 3 || i % 5 == 4);
             assert_int_equal(rate == 0.0, closed);
             if (rate > 1e-250 && !is_first_cycle(&part, &loop)) {
-                equation_input in = {&part,           2.0 / rate, v.strain_amplitude,
-                                     v.stress_mean_mpa, v.stress_max_mpa, gamma};
+                equation_input in = {
+                    &part, 2.0 / rate, v.strain_amplitude, v.stress_mean_mpa, v.stress_max_mpa,
+                    gamma};
                 assert_near(balance(&in), 1.0, 1e-11, 0.0);
             }
         }
@@ -157,7 +158,8 @@ static void walker_half_equals_swt_while_elastic(void **state)
     test_random random = {54};
     for (int i = 0; i < 2000; i++) {
         nw_material m = {.youngs_modulus_mpa = test_random_between(&random, 7e4, 2.1e5),
-                         .fatigue_strength_coefficient_mpa = test_random_between(&random, 800, 2500),
+                         .fatigue_strength_coefficient_mpa =
+                             test_random_between(&random, 800, 2500),
                          .fatigue_strength_exponent = test_random_between(&random, -0.13, -0.06),
                          .fatigue_ductility_coefficient = 1e-60,
                          .fatigue_ductility_exponent = -0.6};

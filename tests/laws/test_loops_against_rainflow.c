@@ -36,21 +36,21 @@ static bool is_reversal(double before, double at, double after)
     return (at - before) * (after - at) < 0.0;
 }
 
-/* Points without repeats or points on the way, in place. */
-static void keep_reversals(loads *all)
+/* Points without repeats or points on the way, in place; returns how many stay. */
+static size_t keep_reversals(double *load, size_t count)
 {
     size_t kept = 0;
-    for (size_t i = 0; i < all->count; i++) {
-        double load = all->items[i];
-        if (kept > 0 && load == all->items[kept - 1]) {
+    for (size_t i = 0; i < count; i++) {
+        double now = load[i];
+        if (kept > 0 && now == load[kept - 1]) {
             continue;
         }
-        if (kept > 1 && !is_reversal(all->items[kept - 2], all->items[kept - 1], load)) {
+        if (kept > 1 && !is_reversal(load[kept - 2], load[kept - 1], now)) {
             kept--;
         }
-        all->items[kept++] = load;
+        load[kept++] = now;
     }
-    all->count = kept;
+    return kept;
 }
 
 /* The repeating history from its first largest load back to the same. */
@@ -64,7 +64,7 @@ static loads started_at_maximum(const loads *history)
     for (size_t i = 0; i <= history->count; i++) {
         add_load(&turned, history->items[(top + i) % history->count]);
     }
-    keep_reversals(&turned);
+    turned.count = keep_reversals(turned.items, turned.count);
     return turned;
 }
 
@@ -266,6 +266,84 @@ static void ranges_sum_to_half_the_way(void **state)
     nw_notch_curve_free(curve);
 }
 
+/* Sums over loops: of their ranges and of the squares. */
+typedef struct sums {
+    double range, square;
+} sums;
+
+static void add_range(sums *to, double range)
+{
+    to->range += range;
+    to->square += range * range;
+}
+
+/* Three-point counting with a stack, from the largest load on, for histories too long for the plain way. */
+static sums stack_count(const double *load, size_t count)
+{
+    sums total = {0.0, 0.0};
+    double *turned = malloc((count + 1) * sizeof *turned), *open = turned;
+    size_t top = 0, used = 0;
+    assert_non_null(turned);
+    for (size_t i = 1; i < count; i++) {
+        top = load[i] > load[top] ? i : top;
+    }
+    for (size_t i = 0; i <= count; i++) {
+        turned[i] = load[(top + i) % count];
+    }
+    size_t points = keep_reversals(turned, count + 1);
+    for (size_t i = 0; i < points; i++) { /* the stack never passes what is still to be read */
+        open[used++] = turned[i];
+        while (used >= 3 &&
+               fabs(open[used - 1] - open[used - 2]) >= fabs(open[used - 2] - open[used - 3])) {
+            add_range(&total, fabs(open[used - 2] - open[used - 3]));
+            open[used - 3] = open[used - 1];
+            used -= 2;
+        }
+    }
+    free(turned);
+    return total;
+}
+
+/* Longer than every buffer on the way: many loops in one pass, and many open branches at once. */
+static void assert_long_history(const double *load, size_t count)
+{
+    nw_notch_curve *curve = test_straight_curve(2e6);
+    nw_event event = test_event(load, count, 1.0);
+    test_loops loops = test_repeating_loops(curve, &event, 1);
+    sums expected = stack_count(load, count), found = {0.0, 0.0};
+    for (size_t i = 0; i < loops.count; i++) {
+        add_range(&found, test_loop_range(&loops.items[i].loop));
+    }
+    assert_near(found.range, expected.range, 0.0, 0.0);
+    assert_near(found.square, expected.square, 0.0, 0.0);
+    test_loops_free(&loops);
+    nw_event_clear(&event);
+    nw_notch_curve_free(curve);
+}
+
+static void long_histories(void **state)
+{
+    enum { LONG = 60000 };
+    test_random random = {15};
+    double *load = malloc(LONG * sizeof *load);
+    assert_non_null(load);
+    for (int reach = 3; reach < 10000; reach *= 20) {
+        for (size_t i = 0; i < LONG; i++) {
+            load[i] = test_random_int(&random, -reach, reach);
+        }
+        assert_long_history(load, LONG);
+    }
+    for (int i = 0; i < LONG; i++) { /* fades: every branch stays open to the end */
+        load[i] = i % 2 == 0 ? LONG - i : i - LONG;
+    }
+    assert_long_history(load, LONG);
+    for (int i = 0; i < LONG; i++) { /* grows: always on the initial curve */
+        load[i] = i % 2 == 0 ? i : -i;
+    }
+    assert_long_history(load, LONG);
+    free(load);
+}
+
 int main(void)
 {
     const struct CMUnitTest tests[] = {
@@ -273,6 +351,7 @@ int main(void)
         cmocka_unit_test(several_events_with_repeats),
         cmocka_unit_test(material_does_not_matter),
         cmocka_unit_test(ranges_sum_to_half_the_way),
+        cmocka_unit_test(long_histories),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

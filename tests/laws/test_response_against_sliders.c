@@ -127,8 +127,8 @@ static void path_of(bed *b, const nw_event *event, nw_local_point *path)
 {
     for (size_t i = 0; i < event->count; i++) {
         drive(b, (int)event->points[i].load_mpa);
-        path[i] = (nw_local_point){b->load, sum_of(b, b->stress_slope),
-                                   sum_of(b, b->strain_slope), i};
+        path[i] =
+            (nw_local_point){b->load, sum_of(b, b->stress_slope), sum_of(b, b->strain_slope), i};
     }
 }
 

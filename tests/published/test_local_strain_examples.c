@@ -6,12 +6,12 @@
  * by bisection. Digits as worked; the tolerance is half of the last one. */
 #include "support/support.h"
 
-#define SAE_1045                                                                                   \
-    "notchwright: 1\n"                                                                             \
-    "material:\n"                                                                                  \
-    "  youngs_modulus: 202000 MPa\n"                                                               \
-    "  cyclic_curve: {strength_coefficient: 1258 MPa, hardening_exponent: 0.208}\n"                \
-    "  strain_life: {fatigue_strength_coefficient: 948 MPa, fatigue_strength_exponent: -0.092,\n"  \
+#define SAE_1045                                                                                  \
+    "notchwright: 1\n"                                                                            \
+    "material:\n"                                                                                 \
+    "  youngs_modulus: 202000 MPa\n"                                                              \
+    "  cyclic_curve: {strength_coefficient: 1258 MPa, hardening_exponent: 0.208}\n"               \
+    "  strain_life: {fatigue_strength_coefficient: 948 MPa, fatigue_strength_exponent: -0.092,\n" \
     "                fatigue_ductility_coefficient: 0.26, fatigue_ductility_exponent: -0.445}\n"
 
 #define RQC_100                                                                                    \

@@ -34,8 +34,8 @@ enum { VALUES = sizeof values / sizeof values[0] };
 
 static nw_rule_input input_of(const worked *w)
 {
-    return (nw_rule_input){206000.0, 1184.0, 0.187, 3.0, w->limit_load_ratio,
-                           w->plastic_net_section};
+    return (nw_rule_input){
+        206000.0, 1184.0, 0.187, 3.0, w->limit_load_ratio, w->plastic_net_section};
 }
 
 static void equation_solved(void **state)

@@ -56,7 +56,8 @@ static void history_as_printed(void **state)
 
 static void history_started_at_its_maximum(void **state)
 {
-    const double loads[] = {5, -1, 3, -4, 4, -2, 1, -3, 5}; /* D to D, as the standard arranges it */
+    const double loads[] = {5,  -1, 3,  -4, 4,
+                            -2, 1,  -3, 5}; /* D to D, as the standard arranges it */
     assert_loops(loads, 9, e1049, 4);
 }
 

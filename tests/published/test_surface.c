@@ -75,8 +75,8 @@ static void exponent_of_a_rough_surface(void **state)
 int main(void)
 {
     const struct CMUnitTest tests[] = {
-        cmocka_unit_test(guideline_example),      cmocka_unit_test(steels),
-        cmocka_unit_test(wrought_aluminium),      cmocka_unit_test(never_above_one),
+        cmocka_unit_test(guideline_example),       cmocka_unit_test(steels),
+        cmocka_unit_test(wrought_aluminium),       cmocka_unit_test(never_above_one),
         cmocka_unit_test(refused_without_formula), cmocka_unit_test(exponent_of_a_rough_surface),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);

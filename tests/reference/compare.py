@@ -8,7 +8,6 @@ line for every disagreement and a summary, and exits with 1 if there was any.
 
 import argparse
 import json
-import math
 import pathlib
 import subprocess
 import sys

@@ -29,9 +29,9 @@ static void make_curve(test_part *part, test_random *random)
         .plastic_net_section =
             part->rule->takes_plastic_net_section && test_random_int(random, 0, 1) == 1,
     };
-    assert_int_equal(nw_notch_curve_build(part->rule, &part->rule_input, TEST_PART_LOAD_MAX,
-                                          &part->curve, NULL),
-                     NW_OK);
+    assert_int_equal(
+        nw_notch_curve_build(part->rule, &part->rule_input, TEST_PART_LOAD_MAX, &part->curve, NULL),
+        NW_OK);
 }
 
 static const nw_correction *random_correction(test_random *random)

@@ -19,7 +19,8 @@ static void refused(const char *text, nw_dimension dimension, const nw_default_u
 {
     double value = -77.0;
     char why[300] = "";
-    assert_int_equal(nw_quantity_read(text, dimension, defaults, &value, why, sizeof why), NW_INPUT);
+    assert_int_equal(nw_quantity_read(text, dimension, defaults, &value, why, sizeof why),
+                     NW_INPUT);
     assert_near(value, -77.0, 0.0, 0.0);
     if (strstr(why, word) == NULL || strstr(why, other) == NULL) {
         fail_msg("'%s' gives '%s', which lacks '%s' or '%s'", text, why, word, other);
@@ -167,10 +168,14 @@ static void listed_units_are_known(void **state)
 int main(void)
 {
     const struct CMUnitTest tests[] = {
-        cmocka_unit_test(every_unit),          cmocka_unit_test(blanks_do_not_matter),
-        cmocka_unit_test(wrong_dimension),     cmocka_unit_test(bare_numbers_need_a_default),
-        cmocka_unit_test(unknown_unit),        cmocka_unit_test(not_a_number),
-        cmocka_unit_test(plain_numbers),       cmocka_unit_test(reason_is_cut_to_its_room),
+        cmocka_unit_test(every_unit),
+        cmocka_unit_test(blanks_do_not_matter),
+        cmocka_unit_test(wrong_dimension),
+        cmocka_unit_test(bare_numbers_need_a_default),
+        cmocka_unit_test(unknown_unit),
+        cmocka_unit_test(not_a_number),
+        cmocka_unit_test(plain_numbers),
+        cmocka_unit_test(reason_is_cut_to_its_room),
         cmocka_unit_test(listed_units_are_known),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);

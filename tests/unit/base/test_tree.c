@@ -165,7 +165,8 @@ static void set_refused(nw_node *root, const char *path, const char *value, cons
     assert_non_null(strstr(diagnostics.items[0].message, word));
 }
 
-static const char case_text[] = "notch:\n  rule: neuber\nload:\n  - {repeats: 1}\n  - {repeats: 2}\n";
+static const char case_text[] =
+    "notch:\n  rule: neuber\nload:\n  - {repeats: 1}\n  - {repeats: 2}\n";
 
 static void settings_replace_and_add(void **state)
 {
@@ -179,7 +180,8 @@ static void settings_replace_and_add(void **state)
     assert_string_equal(nw_node_entry(nw_node_entry(root, "notch"), "rule")->scalar, "esed");
     assert_string_equal(nw_node_entry(load->children[1], "repeats")->scalar, "7");
     assert_string_equal(nw_node_entry(load->children[0], "scale")->scalar, "1 MPa");
-    assert_string_equal(nw_node_entry(nw_node_entry(root, "life"), "mean_stress")->scalar, "walker");
+    assert_string_equal(nw_node_entry(nw_node_entry(root, "life"), "mean_stress")->scalar,
+                        "walker");
     assert_string_equal(nw_node_entry(root, "title")->scalar, "x: y");
     assert_string_equal(nw_node_place(nw_node_entry(root, "title")).file, "--set x");
     nw_node_free(root);
@@ -205,12 +207,18 @@ static void settings_that_name_no_place(void **state)
 int main(void)
 {
     const struct CMUnitTest tests[] = {
-        cmocka_unit_test(every_node_knows_its_place), cmocka_unit_test(quotes_are_noted),
-        cmocka_unit_test(duplicate_keys),             cmocka_unit_test(every_duplicate_is_told),
-        cmocka_unit_test(anchors_aliases_and_tags),   cmocka_unit_test(keys_are_plain_words),
-        cmocka_unit_test(depth_is_limited),           cmocka_unit_test(depth_is_refused_early),
-        cmocka_unit_test(broken_yaml),                cmocka_unit_test(missing_file),
-        cmocka_unit_test(settings_replace_and_add),   cmocka_unit_test(settings_that_name_no_place),
+        cmocka_unit_test(every_node_knows_its_place),
+        cmocka_unit_test(quotes_are_noted),
+        cmocka_unit_test(duplicate_keys),
+        cmocka_unit_test(every_duplicate_is_told),
+        cmocka_unit_test(anchors_aliases_and_tags),
+        cmocka_unit_test(keys_are_plain_words),
+        cmocka_unit_test(depth_is_limited),
+        cmocka_unit_test(depth_is_refused_early),
+        cmocka_unit_test(broken_yaml),
+        cmocka_unit_test(missing_file),
+        cmocka_unit_test(settings_replace_and_add),
+        cmocka_unit_test(settings_that_name_no_place),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
