@@ -12,6 +12,8 @@
 
 #include "notchwright/material.h"
 
+#include <stdio.h>
+
 #ifdef __cplusplus
 extern "C" {
 #endif
@@ -158,19 +160,22 @@ NW_API const char *nw_scatter_model_name(nw_scatter_model model);
 enum { NW_FIT_LEVELS_MOST = 16, NW_FIT_GRID = 41, NW_FIT_PLAN_MOST = 60 };
 
 typedef struct nw_fit_options {
-    double youngs_modulus_mpa;   /* NAN: from the tests, where stress and plastic strain were measured */
-    nw_fit_method method;        /* NW_FIT_BY_TESTS: likelihood when there are run-outs, else lines */
+    double
+        youngs_modulus_mpa; /* NAN: from the tests, where stress and plastic strain were measured */
+    nw_fit_method method;   /* NW_FIT_BY_TESTS: likelihood when there are run-outs, else lines */
     nw_distribution distribution; /* of the likelihood */
     nw_scatter_model scatter;
     double least_plastic_strain; /* smaller plastic strain amplitudes are left out of the lines */
-    double level_width;          /* relative width of a level; NAN: 2 % of strain or stress, 15 % of plastic strain */
-    double limits;               /* confidence of two-sided limits */
+    double
+        level_width; /* relative width of a level; NAN: 2 % of strain or stress, 15 % of plastic strain */
+    double limits;                         /* confidence of two-sided limits */
     double percentile[NW_FIT_LEVELS_MOST]; /* shares failed, in (0,1) */
     size_t percentile_count;
     double survival[NW_FIT_LEVELS_MOST], confidence[NW_FIT_LEVELS_MOST]; /* of tolerance curves */
     size_t survival_count, confidence_count;
-    double cyclic_disagreement_limit; /* relative stress between direct and compatible cyclic curve */
-    const char *const *drop;          /* ids to leave out */
+    double
+        cyclic_disagreement_limit; /* relative stress between direct and compatible cyclic curve */
+    const char *const *drop;       /* ids to leave out */
     size_t drop_count;
     bool profile;       /* profile-likelihood limits */
     double plan_cycles; /* life at which the 50 % curve is wanted narrower; NAN: no plan */
@@ -229,8 +234,8 @@ typedef struct nw_likelihood {
     size_t parameters, failures, runouts;
     double theta[6], covariance[36]; /* covariance: parameters x parameters, row after row */
     double reference_cycles;         /* geometric mean of the lives */
-    double log10_life_sd;            /* of log10 life at reference_cycles, as the likelihood has it */
-    double log_likelihood;           /* of the lives in cycles */
+    double log10_life_sd;  /* of log10 life at reference_cycles, as the likelihood has it */
+    double log_likelihood; /* of the lives in cycles */
     double aic;
 } nw_likelihood;
 
@@ -240,7 +245,8 @@ typedef struct nw_fit_point {
 } nw_fit_point;
 
 typedef struct nw_fit_curve {
-    bool tolerance;    /* one-sided: `cycles` is survived by `survival` with `confidence`; no low, high */
+    bool
+        tolerance; /* one-sided: `cycles` is survived by `survival` with `confidence`; no low, high */
     double survival;   /* 1 - share failed */
     double confidence; /* tolerance only, else NAN */
     nw_fit_point points[NW_FIT_GRID];
@@ -264,8 +270,8 @@ typedef struct nw_fit_plan_row {
 typedef struct nw_fit_plan {
     bool available;
     char why[160];
-    double cycles, strain_amplitude; /* life asked for, and the 50 % curve there */
-    double factor_now;               /* limits of life: divided and multiplied by this */
+    double cycles, strain_amplitude;           /* life asked for, and the 50 % curve there */
+    double factor_now;                         /* limits of life: divided and multiplied by this */
     double factor_after[NW_FIT_PLAN_MOST + 1]; /* [tests added] */
     size_t tests;
     nw_fit_plan_row rows[NW_FIT_PLAN_MOST];
@@ -285,15 +291,18 @@ typedef struct nw_fit {
     double life_min, life_max, strain_min, strain_max; /* tested: failures; all tests */
     nw_fit_line plastic, elastic, cyclic;
     double compatible_coefficient_mpa, compatible_exponent; /* K', n' from compatibility */
-    double cyclic_disagreement; /* largest |sa_direct/sa_compatible - 1| over the tested plastic strains */
-    nw_likelihood likelihood;   /* of the model asked for */
+    double
+        cyclic_disagreement; /* largest |sa_direct/sa_compatible - 1| over the tested plastic strains */
+    nw_likelihood likelihood;    /* of the model asked for */
     nw_likelihood candidates[4]; /* both distributions, both scatter models */
     nw_fit_parameter parameter[NW_FIT_PARAMETERS];
-    double theta[4], covariance[16]; /* ln sf' [MPa], b, ln ef', c of the method; NAN when not all exist */
+    double theta[4],
+        covariance[16]; /* ln sf' [MPa], b, ln ef', c of the method; NAN when not all exist */
     double log10_life_sd, log10_life_sd_low, log10_life_sd_high;
-    double log10_life_sd_corrected; /* likelihood: times sqrt(n/(n - p)); lines: the same as log10_life_sd */
-    double degrees;                 /* of the scatter */
-    double scatter_slope;           /* d ln(sd)/d log10 N; 0: constant */
+    double
+        log10_life_sd_corrected; /* likelihood: times sqrt(n/(n - p)); lines: the same as log10_life_sd */
+    double degrees;              /* of the scatter */
+    double scatter_slope;        /* d ln(sd)/d log10 N; 0: constant */
     nw_fit_curve *curves;
     size_t curve_count;
     nw_fit_outlier *outliers;
@@ -321,9 +330,24 @@ NW_API void nw_fit_free(nw_fit *result);
 NW_API double nw_fit_life(const nw_fit *fit, double strain_amplitude, double survival,
                           double confidence, double *limits);
 
-/* The fit as a material (basis tested), without a name. NW_INPUT when a parameter is missing. */
+/* The fit as a material (basis tested), without name and group. NW_INPUT when a parameter is missing. */
 NW_API nw_status nw_fit_material(const nw_coupons *coupons, const nw_fit *fit,
                                  nw_material *material, nw_diagnostics *diagnostics);
+
+/* ---- written down ---- */
+
+/* The material file: nw_material_write() and a section `fit` with method and covariance of the parameters. */
+NW_API nw_status nw_fit_write_material(FILE *to, const nw_fit *fit, const nw_material *material);
+
+/* For a person to read. */
+NW_API nw_status nw_write_fit_text(FILE *to, const nw_coupons *coupons, const nw_fit *fit);
+
+/* One object, format "notchwright.fit/1"; stress in MPa, strain as a ratio, life in cycles; numbers that do not
+ * exist are null. Returns NW_OK, NW_MEMORY or NW_FILE. */
+NW_API nw_status nw_write_fit_json(FILE *to, const nw_coupons *coupons, const nw_fit *fit);
+
+/* The curves, one point a row. */
+NW_API nw_status nw_write_fit_csv(FILE *to, const nw_fit *fit);
 
 #ifdef __cplusplus
 }

@@ -154,7 +154,8 @@ enum {
     NW_NEEDS_ULTIMATE = 1u,
     NW_NEEDS_MODULUS = 2u,
     NW_NEEDS_HARDNESS = 4u,
-    NW_NEEDS_FRACTURE_STRAIN = 8u /* or reduction of area */
+    NW_NEEDS_FRACTURE_STRAIN = 8u, /* or reduction of area */
+    NW_USES_FRACTURE_STRESS = 16u  /* measured, or Su (1 + D) */
 };
 
 typedef struct nw_estimate {
@@ -164,9 +165,10 @@ typedef struct nw_estimate {
     const char *equation;  /* with the symbols of nw_estimate_input */
     const char *reference; /* published source */
     const char *accuracy;  /* what is reported about it */
+    const char *check;     /* what its formula was held against */
     const char *doubt;     /* what about its published form could not be confirmed, or NULL */
     unsigned groups;       /* bits 1u << nw_group */
-    unsigned needs;        /* bits NW_NEEDS_... */
+    unsigned needs;        /* bits NW_NEEDS_..., NW_USES_... */
     /* False with the reason in `why` beyond its range; NULL: none but groups and needs. */
     bool (*limits)(const nw_estimate_input *input, char *why, size_t capacity);
     void (*evaluate)(const nw_estimate_input *input, nw_estimate_values *values);

@@ -19,6 +19,8 @@ typedef enum nw_dimension {
     NW_STRAIN,   /* ratio */
     NW_FRACTION, /* ratio; written as a number or in percent */
     NW_HARDNESS, /* HB */
+    NW_FORCE,    /* N */
+    NW_MOMENT,   /* N mm */
     NW_DIMENSIONS
 } nw_dimension;
 

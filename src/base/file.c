@@ -80,6 +80,10 @@ static FILE *open_temporary(nw_whole_file *file)
             return NULL;
         }
     }
+    struct stat present;
+    if (descriptor >= 0 && stat(file->path, &present) == 0) {
+        (void)!fchmod(descriptor, present.st_mode & 07777); /* as the file it replaces */
+    }
     FILE *stream = descriptor < 0 ? NULL : fdopen(descriptor, "wb");
     if (stream == NULL && descriptor >= 0) {
         int trouble = errno;
@@ -88,6 +92,13 @@ static FILE *open_temporary(nw_whole_file *file)
         errno = trouble;
     }
     return stream;
+}
+
+/* The file behind a link is the one to replace. Returns a copy that the caller frees, or NULL. */
+static char *destination_of(const char *path)
+{
+    char *resolved = realpath(path, NULL);
+    return resolved != NULL ? resolved : errno == ENOMEM ? NULL : nw_text_duplicate(path);
 }
 
 /* Devices and pipes are written to directly: they cannot be replaced by renaming. */
@@ -104,8 +115,8 @@ nw_status nw_whole_file_open(nw_whole_file *file, const char *path, nw_diagnosti
         file->stream = stdout;
         return NW_OK;
     }
-    file->path = nw_text_duplicate(path);
-    file->temporary = malloc(strlen(path) + 40);
+    file->path = destination_of(path);
+    file->temporary = file->path == NULL ? NULL : malloc(strlen(file->path) + 40);
     if (file->path == NULL || file->temporary == NULL) {
         nw_whole_file_discard(file);
         return nw_fault(diagnostics, NW_MEMORY, NULL, NULL, "out of memory opening %s", path);
@@ -115,7 +126,7 @@ nw_status nw_whole_file_open(nw_whole_file *file, const char *path, nw_diagnosti
         file->temporary = NULL;
         file->stream = fopen(path, "wb");
     } else {
-        strcpy(file->temporary, path);
+        strcpy(file->temporary, file->path);
         file->stream = open_temporary(file);
     }
     if (file->stream == NULL) {
@@ -132,7 +143,8 @@ nw_status nw_whole_file_commit(nw_whole_file *file, nw_diagnostics *diagnostics)
 {
     const char *path = file->path == NULL ? "standard output" : file->path;
     errno = 0;
-    bool failed = ferror(file->stream) != 0 || fflush(file->stream) != 0;
+    bool failed = ferror(file->stream) != 0;
+    failed = fflush(file->stream) != 0 || failed; /* also tells why an earlier write failed */
     if (!failed && file->temporary != NULL) {
         failed = fsync(fileno(file->stream)) != 0;
     }

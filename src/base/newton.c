@@ -1,8 +1,9 @@
 #include "base/newton.h"
 
+#include "base/vector_pool.h"
+
 #include <kinsol/kinsol.h>
 #include <math.h>
-#include <nvector/nvector_serial.h>
 #include <stdlib.h>
 #include <string.h>
 #include <sunlinsol/sunlinsol_dense.h>
@@ -11,6 +12,7 @@
 struct nw_newton {
     size_t size;
     SUNContext context;
+    nw_vector_pool pool;
     N_Vector unknown, scale;
     SUNMatrix matrix;
     SUNLinearSolver linear;
@@ -66,18 +68,30 @@ static void keep_quiet(int code, const char *module, const char *function, char 
     (void)data;
 }
 
+/* SUNContext_Create uses what it allocates without asking whether it got it; it needs far less than this. */
+static bool memory_is_left(void)
+{
+    void *volatile probe = malloc(1 << 14);
+    bool left = probe != NULL;
+    free(probe);
+    return left;
+}
+
 static bool set_up(nw_newton *solver)
 {
     sunindextype size = (sunindextype)solver->size;
-    if (SUNContext_Create(NULL, &solver->context) != 0) {
+    if (!memory_is_left() || SUNContext_Create(NULL, &solver->context) != 0) {
+        solver->context = NULL; /* a half-made one cannot be freed */
         return false;
     }
-    solver->unknown = N_VNew_Serial(size, solver->context);
-    solver->scale = N_VNew_Serial(size, solver->context);
+    if (!nw_vector_pool_fill(&solver->pool, size, solver->context)) {
+        return false;
+    }
+    solver->unknown = nw_vector_pool_take(&solver->pool);
+    solver->scale = nw_vector_pool_take(&solver->pool);
     solver->matrix = SUNDenseMatrix(size, size, solver->context);
     solver->kinsol = KINCreate(solver->context);
-    if (solver->unknown == NULL || solver->scale == NULL || solver->matrix == NULL ||
-        solver->kinsol == NULL) {
+    if (solver->matrix == NULL || solver->kinsol == NULL) {
         return false;
     }
     N_VConst(1.0, solver->scale);
@@ -160,12 +174,7 @@ void nw_newton_free(nw_newton *solver)
     if (solver->matrix != NULL) {
         SUNMatDestroy(solver->matrix);
     }
-    if (solver->scale != NULL) {
-        N_VDestroy(solver->scale);
-    }
-    if (solver->unknown != NULL) {
-        N_VDestroy(solver->unknown);
-    }
+    nw_vector_pool_free(&solver->pool);
     if (solver->context != NULL) {
         SUNContext_Free(&solver->context);
     }

@@ -16,7 +16,8 @@ typedef struct unit {
 } unit;
 
 /* 1 psi = 4.4482216152605 N / (25.4 mm)^2, exact by definition. */
-#define PSI_IN_MPA (4.4482216152605 / (25.4 * 25.4))
+#define LBF_IN_N 4.4482216152605
+#define PSI_IN_MPA (LBF_IN_N / (25.4 * 25.4))
 
 static const unit units[] = {
     {"Pa", NW_STRESS, 1e-6},
@@ -44,10 +45,26 @@ static const unit units[] = {
     {"%", NW_FRACTION, 1e-2},
     {"percent", NW_FRACTION, 1e-2},
     {"HB", NW_HARDNESS, 1.0},
+    {"HBW", NW_HARDNESS, 1.0},
+    {"N", NW_FORCE, 1.0},
+    {"kN", NW_FORCE, 1e3},
+    {"MN", NW_FORCE, 1e6},
+    {"lbf", NW_FORCE, LBF_IN_N},
+    {"kip", NW_FORCE, 1e3 * LBF_IN_N},
+    {"Nmm", NW_MOMENT, 1.0},
+    {"Nm", NW_MOMENT, 1e3},
+    {"kNm", NW_MOMENT, 1e6},
+    {"N mm", NW_MOMENT, 1.0},
+    {"N m", NW_MOMENT, 1e3},
+    {"kN m", NW_MOMENT, 1e6},
+    {"lbf-in", NW_MOMENT, LBF_IN_N * 25.4},
+    {"lbf-ft", NW_MOMENT, LBF_IN_N * 12.0 * 25.4},
+    {"lbf in", NW_MOMENT, LBF_IN_N * 25.4},
+    {"lbf ft", NW_MOMENT, LBF_IN_N * 12.0 * 25.4},
 };
 
 static const char *const dimension_names[NW_DIMENSIONS] = {
-    "pure number", "stress", "length", "strain", "fraction", "hardness",
+    "pure number", "stress", "length", "strain", "fraction", "hardness", "force", "moment",
 };
 
 static const char *const dimension_units[NW_DIMENSIONS] = {
@@ -56,7 +73,9 @@ static const char *const dimension_units[NW_DIMENSIONS] = {
     "um, mm, cm, m or in",
     "ratio, %, microstrain, mm/mm or in/in",
     "% (or a plain ratio)",
-    "HB",
+    "HB (or HBW)",
+    "N, kN, MN, lbf or kip",
+    "Nmm, Nm, kNm, lbf-in or lbf-ft",
 };
 
 const char *nw_dimension_name(nw_dimension dimension)
@@ -111,6 +130,11 @@ static bool default_factor(nw_dimension dimension, const nw_default_units *defau
     return name != NULL && nw_unit_factor(name, dimension, factor);
 }
 
+static bool is_other_hardness(const char *name)
+{
+    return strncmp(name, "HV", 2) == 0 || strncmp(name, "HR", 2) == 0;
+}
+
 nw_status nw_quantity_read(const char *text, nw_dimension dimension,
                            const nw_default_units *defaults, double *value, char *why,
                            size_t capacity)
@@ -148,7 +172,11 @@ nw_status nw_quantity_read(const char *text, nw_dimension dimension,
                  dimension == NW_PURE ? "no unit" : "");
         if (dimension != NW_PURE) {
             size_t used = strlen(why);
-            snprintf(why + used, capacity - used, " in %s", nw_dimension_units(dimension));
+            snprintf(why + used, capacity - used, " in %s%s", nw_dimension_units(dimension),
+                     dimension == NW_HARDNESS && is_other_hardness(rest)
+                         ? "; Vickers and Rockwell are not converted: that takes the table for the "
+                           "alloy in ISO 18265 or ASTM E140, and the tables differ"
+                         : "");
         }
         return NW_INPUT;
     }

@@ -1,6 +1,7 @@
 #include "base/text.h"
 
 #include <stdarg.h>
+#include <stdint.h>
 #include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
@@ -50,7 +51,7 @@ static size_t edit_distance(const char *a, const char *b)
 {
     size_t n = strlen(a), m = strlen(b);
     if (n >= LONGEST_WORD || m >= LONGEST_WORD) {
-        return LONGEST_WORD;
+        return SIZE_MAX;
     }
     size_t rows[3][LONGEST_WORD];
     for (size_t j = 0; j <= m; j++) {

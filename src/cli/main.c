@@ -7,7 +7,7 @@
 #include <string.h>
 
 static const nw_verb *const verbs[] = {
-    &nw_verb_assess,
+    &nw_verb_assess, &nw_verb_estimate, &nw_verb_fit, &nw_verb_material, &nw_verb_notch,
 };
 enum { VERBS = sizeof verbs / sizeof verbs[0] };
 
@@ -15,7 +15,7 @@ static int print_help(void)
 {
     puts("notchwright: strain-life analysis of notched metal parts\n\nUsage:");
     for (size_t i = 0; i < VERBS; i++) {
-        printf("  notchwright %-9s %-12s %s\n", verbs[i]->name, verbs[i]->operands,
+        printf("  notchwright %-9s %-15s %s\n", verbs[i]->name, verbs[i]->operands,
                verbs[i]->summary);
     }
     puts("\n  notchwright VERB --help   options and an example\n"
@@ -25,7 +25,7 @@ static int print_help(void)
          "a qualified engineer; it does not replace applicable codes, tests of the part or "
          "licensed\n"
          "practice.");
-    return fflush(stdout) == 0 ? 0 : nw_status_exit(NW_FILE);
+    return nw_cli_end_of_output();
 }
 
 static int wrong_usage(const char *word)
@@ -49,8 +49,9 @@ static int wrong_usage(const char *word)
 
 int main(int count, char **words)
 {
-    /* A reader that goes away is a file error like any other, not a sudden death. */
+    /* A reader that goes away and a size limit are file errors like any other, not a sudden death. */
     signal(SIGPIPE, SIG_IGN);
+    signal(SIGXFSZ, SIG_IGN);
     gsl_set_error_handler_off();
     const char *word = count < 2 ? NULL : words[1];
     if (word == NULL) {
@@ -58,7 +59,7 @@ int main(int count, char **words)
     }
     if (strcmp(word, "--version") == 0) {
         printf("notchwright %s\n", nw_version());
-        return 0;
+        return nw_cli_end_of_output();
     }
     if (strcmp(word, "--help") == 0 || strcmp(word, "-h") == 0) {
         return print_help();

@@ -2,6 +2,7 @@
 #include "base/file.h"
 #include "cli/verb.h"
 
+#include <errno.h>
 #include <stdlib.h>
 #include <string.h>
 #include <unistd.h>
@@ -19,7 +20,9 @@ nw_status nw_cli_write(const nw_arguments *arguments, nw_writer write, const voi
     if (status != NW_OK) {
         return status;
     }
-    bool colour = file.stream == stdout && isatty(STDOUT_FILENO) && getenv("NO_COLOR") == NULL;
+    const char *no_colour = getenv("NO_COLOR");
+    bool colour = file.stream == stdout && isatty(STDOUT_FILENO) &&
+                  (no_colour == NULL || no_colour[0] == '\0');
     status = write(file.stream, nw_argument_format(arguments), colour, data);
     if (status != NW_OK && status != NW_FILE) {
         nw_whole_file_discard(&file);
@@ -43,6 +46,18 @@ static void print_faults(const nw_diagnostics *diagnostics, nw_status status)
     }
 }
 
+int nw_cli_end_of_output(void)
+{
+    errno = 0;
+    bool failed = ferror(stdout) != 0;
+    failed = fflush(stdout) != 0 || failed;
+    if (failed) {
+        fprintf(stderr, "standard output: error: cannot be written: %s\n",
+                errno == 0 ? "an earlier write failed" : strerror(errno));
+    }
+    return failed ? nw_status_exit(NW_FILE) : 0;
+}
+
 int nw_cli_run(const nw_verb *verb, int count, char **words)
 {
     nw_arguments arguments;
@@ -51,7 +66,7 @@ int nw_cli_run(const nw_verb *verb, int count, char **words)
     nw_status status = nw_arguments_read(verb, count, words, &arguments, &diagnostics);
     if (status == NW_OK && nw_argument(&arguments, "--help") != NULL) {
         nw_verb_help(verb);
-        return fflush(stdout) == 0 ? 0 : nw_status_exit(NW_FILE);
+        return nw_cli_end_of_output();
     }
     if (status == NW_OK) {
         status = verb->run(&arguments, &diagnostics);

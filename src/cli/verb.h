@@ -26,10 +26,14 @@ typedef struct nw_verb {
 } nw_verb;
 
 extern const nw_verb nw_verb_assess;
+extern const nw_verb nw_verb_estimate;
+extern const nw_verb nw_verb_fit;
+extern const nw_verb nw_verb_material;
+extern const nw_verb nw_verb_notch;
 
 /* ---- arguments as given ---- */
 
-enum { NW_MOST_GIVEN = 256, NW_MOST_OPERANDS = 16 };
+enum { NW_MOST_GIVEN = 256, NW_MOST_OPERANDS = 1024 };
 
 struct nw_arguments {
     const nw_verb *verb;
@@ -80,6 +84,9 @@ typedef struct nw_cli_progress {
 nw_cli_progress nw_cli_progress_start(void);
 void nw_cli_progress_tell(void *progress, const char *history, uint64_t samples);
 void nw_cli_progress_end(nw_cli_progress *progress);
+
+/* Ends what was printed to standard output: exit status 0, or 5 and a message when it could not be written. */
+int nw_cli_end_of_output(void);
 
 /* Runs a verb on its words: help, faults on standard error; returns the exit status. */
 int nw_cli_run(const nw_verb *verb, int count, char **words);

@@ -1,5 +1,6 @@
 #include "history/text_layout.h"
 
+#include <ctype.h>
 #include <string.h>
 #include <strings.h>
 
@@ -102,6 +103,18 @@ char nw_text_delimiter_of(const char *line, const char *end, char decimal)
     return memchr(whole.start, ' ', inner) != NULL ? NW_BLANKS : NW_SINGLE;
 }
 
+/* Letters other than the exponent's. */
+static size_t count_letters(const char *p, const char *end)
+{
+    size_t letters = 0;
+    for (; p < end; p++) {
+        unsigned char c = (unsigned char)*p;
+        letters += c >= 0x80 || (isalpha(c) && c != 'e' && c != 'E');
+    }
+    return letters;
+}
+
+/* "2nd gauge" is a name; "12.5x" is a number gone wrong and must not pass for a header. */
 bool nw_text_looks_numeric(nw_text_field field)
 {
     const char *p = field.start;
@@ -111,7 +124,8 @@ bool nw_text_looks_numeric(nw_text_field field)
     size_t length = (size_t)(field.end - p);
     bool digits = (length > 0 && *p >= '0' && *p <= '9') ||
                   (length > 1 && (*p == '.' || *p == ',') && p[1] >= '0' && p[1] <= '9');
-    return digits || (length == 3 && strncasecmp(p, "nan", 3) == 0) ||
+    return (digits && count_letters(p, field.end) < 2) ||
+           (length == 3 && strncasecmp(p, "nan", 3) == 0) ||
            (length == 3 && strncasecmp(p, "inf", 3) == 0) ||
            (length == 8 && strncasecmp(p, "infinity", 8) == 0);
 }

@@ -3,6 +3,7 @@
 #include "base/text.h"
 #include "history/reader.h"
 #include "history/text_layout.h"
+#include "notchwright/quantity.h"
 
 #include <math.h>
 #include <stdlib.h>
@@ -327,9 +328,15 @@ static nw_status choose_column(text_file *file, const nw_input *input, const cha
     return NW_OK;
 }
 
-/* A first line without a single number is a header; one that starts with numbers is data. */
-static bool is_header(const text_file *file, const char *line, const char *end)
+/* A first line without a single number is a header, and so is one that names the column asked for; else it is
+ * data. */
+static bool is_header(text_file *file, const char *line, const char *end, const char *wanted)
 {
+    double number;
+    if (wanted != NULL && !nw_number_read(wanted, &number) &&
+        column_by_name(file, line, end, wanted)) {
+        return true;
+    }
     nw_text_field field;
     while (nw_text_next_field(&file->layout, &line, end, &field)) {
         if (nw_text_looks_numeric(field)) {
@@ -339,40 +346,81 @@ static bool is_header(const text_file *file, const char *line, const char *end)
     return true;
 }
 
+/* Moves to the next line with content, reading on as far as needed: comments may be long. */
+static nw_status find_content(text_file *file, nw_input *input, const char **line_end,
+                              nw_diagnostics *diagnostics)
+{
+    *line_end = NULL;
+    while (!seek_content(file, line_end)) {
+        if (file->source_ended) {
+            return nw_input_fault(input, file->line, 1, NW_INPUT, diagnostics,
+                                  "found no values, expected at least one");
+        }
+        nw_status status = fill(file, input, diagnostics);
+        if (status != NW_OK) {
+            return status;
+        }
+    }
+    /* With the first line at the front, the second one is in the buffer too. */
+    if (file->at > file->buffer && !file->source_ended) {
+        nw_status status = fill(file, input, diagnostics);
+        *line_end = memchr(file->at, '\n', (size_t)(file->lines_end - file->at));
+        return status;
+    }
+    return NW_OK;
+}
+
+static void set_columns(text_file *file, const char *line, const char *end)
+{
+    file->layout.delimiter = nw_text_delimiter_of(line, end, file->layout.decimal);
+    file->layout.columns = nw_text_count_fields(&file->layout, line, end);
+}
+
+static nw_status pass_header(text_file *file, nw_input *input, const char *end,
+                             const text_file *second, bool has_second, nw_diagnostics *diagnostics)
+{
+    if (!has_second) {
+        return nw_input_fault(input, file->line + 1, 1, NW_INPUT, diagnostics,
+                              "found a header and no values, expected at least one row");
+    }
+    size_t names = nw_text_count_fields(&file->layout, file->at, end);
+    if (names != file->layout.columns) {
+        return nw_input_fault(input, second->line, 1, NW_INPUT, diagnostics,
+                              "found %zu field%s in this row, expected %zu as in the header",
+                              file->layout.columns, file->layout.columns == 1 ? "" : "s", names);
+    }
+    note_unit(file, input, file->at, end);
+    file->at = second->at;
+    file->line = second->line;
+    return NW_OK;
+}
+
+/* The first row of data tells the delimiter: names in a header may hold blanks. */
 static nw_status find_layout(text_file *file, nw_input *input, const nw_history_options *options,
                              nw_diagnostics *diagnostics)
 {
     const char *first_end, *data_end;
-    if (!seek_content(file, &first_end)) {
-        return nw_input_fault(input, file->line, 1, NW_INPUT, diagnostics,
-                              "found no values, expected at least one");
+    nw_status status = find_content(file, input, &first_end, diagnostics);
+    if (status != NW_OK) {
+        return status;
     }
     text_file second = *file;
     second.at = file->at + (first_end - file->at) + 1;
     second.line++;
     bool has_second = seek_content(&second, &data_end);
-    const char *sample = has_second ? second.at : file->at;
-    const char *sample_end = nw_text_content_end(sample, has_second ? data_end : first_end);
-    file->layout.delimiter = nw_text_delimiter_of(sample, sample_end, file->layout.decimal);
-    file->layout.columns = nw_text_count_fields(&file->layout, sample, sample_end);
     const char *end = nw_text_content_end(file->at, first_end);
-    file->layout.has_header = is_header(file, file->at, end);
-    nw_status status = choose_column(file, input, file->at, end, options->column, diagnostics);
+    if (has_second) {
+        set_columns(file, second.at, nw_text_content_end(second.at, data_end));
+    } else {
+        set_columns(file, file->at, end);
+    }
+    file->layout.has_header = is_header(file, file->at, end, options->column);
+    if (!file->layout.has_header) {
+        set_columns(file, file->at, end);
+    }
+    status = choose_column(file, input, file->at, end, options->column, diagnostics);
     if (status == NW_OK && file->layout.has_header) {
-        if (!has_second) {
-            return nw_input_fault(input, file->line + 1, 1, NW_INPUT, diagnostics,
-                                  "found a header and no values, expected at least one row");
-        }
-        size_t names = nw_text_count_fields(&file->layout, file->at, end);
-        if (names != file->layout.columns) {
-            return nw_input_fault(input, second.line, 1, NW_INPUT, diagnostics,
-                                  "found %zu field%s in this row, expected %zu as in the header",
-                                  file->layout.columns, file->layout.columns == 1 ? "" : "s",
-                                  names);
-        }
-        note_unit(file, input, file->at, end);
-        file->at = second.at;
-        file->line = second.line;
+        status = pass_header(file, input, end, &second, has_second, diagnostics);
     }
     return status;
 }

@@ -144,14 +144,14 @@ static nw_status pass(run *r)
 /* Whether loops that were not kept could, added up, be among the worst. */
 static bool skipped_could_matter(const nw_tally *tally)
 {
-    if (tally->skipped == 0) {
+    if (tally->skipped_damage == 0.0) {
         return false;
     }
     if (tally->kept_count < tally->top_most) {
         return true;
     }
     const nw_counted_loop *last = &tally->kept[tally->top_most - 1];
-    return (double)tally->skipped * tally->keep_from > last->rate * last->count;
+    return tally->skipped_damage > last->rate * last->count;
 }
 
 /* The block from rest, then the repeating block. Of the second only loops are kept that can be among the

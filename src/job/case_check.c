@@ -69,10 +69,11 @@ static void resolve_surface(nw_field_reader *reader, const nw_node *root, nw_cas
         }
         result->surface_factor = factor;
     }
-    bool positive = result->surface_factor > 0.0;
-    nw_strain_life curve =
-        nw_strain_life_of(m, positive ? result->surface_factor : 1.0, result->surface_reversals);
-    if (!positive || !(curve.fatigue_strength_exponent < 0.0) ||
+    if (!(result->surface_factor > 0.0)) {
+        return; /* said where it was read */
+    }
+    nw_strain_life curve = nw_strain_life_of(m, result->surface_factor, result->surface_reversals);
+    if (!(curve.fatigue_strength_exponent < 0.0) ||
         !(curve.fatigue_strength_exponent > curve.fatigue_ductility_exponent)) {
         nw_field_fault(reader, node_for(root, "life", "surface_factor"), "life", "surface_factor",
                        "%g turns the exponent b into %g, expected it to stay between c (%g) and 0",

@@ -88,11 +88,12 @@ static nw_status keep(nw_tally *tally, const nw_loop *loops, const double *rates
         tally->kept = kept;
         tally->kept_capacity = capacity;
     }
+    /* By the rate and not by weight times rate: of equal loops all are kept or none. */
     for (size_t i = 0; i < count; i++) {
-        if (weight * rates[i] >= tally->keep_from) {
+        if (rates[i] >= tally->keep_from) {
             tally->kept[tally->kept_count++] = (nw_counted_loop){loops[i], weight, rates[i]};
         } else {
-            tally->skipped++;
+            tally->skipped_damage += weight * rates[i];
         }
     }
     return NW_OK;
@@ -154,5 +155,6 @@ void nw_tally_restart(nw_tally *tally)
 {
     tally->damage = tally->damage_above = tally->loops = 0.0;
     tally->left_out = (nw_left_out){0.0, 0.0};
-    tally->kept_count = tally->skipped = 0;
+    tally->kept_count = 0;
+    tally->skipped_damage = 0.0;
 }

@@ -32,11 +32,12 @@ typedef struct nw_tally {
     size_t top_most;
     double top[NW_WORST_MOST];
 
-    /* Loops kept while `keeps`: those that do at least `keep_from` damage. */
+    /* Loops kept while `keeps`: those whose 1/N is at least `keep_from`. */
     bool keeps;
     double keep_from;
     nw_counted_loop *kept; /* [kept_count] */
-    size_t kept_count, kept_capacity, skipped;
+    size_t kept_count, kept_capacity;
+    double skipped_damage;
 } nw_tally;
 
 /* nw_loop_sink for an nw_tally. */

@@ -112,9 +112,6 @@ static void add_fracture(nw_text_builder *out, const nw_estimate_input *input)
     } else {
         nw_text_add(out, ", fracture strain %.4g", strain);
     }
-    if (!isnan(input->fracture_stress_mpa)) {
-        nw_text_add(out, ", fracture stress %.6g MPa", input->fracture_stress_mpa);
-    }
 }
 
 char *nw_estimate_inputs_text(const nw_estimate *record, const nw_estimate_input *input, char *text,
@@ -130,6 +127,10 @@ char *nw_estimate_inputs_text(const nw_estimate *record, const nw_estimate_input
     }
     if (record->needs & NW_NEEDS_FRACTURE_STRAIN) {
         add_fracture(&out, input);
+    }
+    if (record->needs & NW_USES_FRACTURE_STRESS) {
+        nw_text_add(&out, ", fracture stress %.6g MPa%s", nw_estimate_fracture_stress_mpa(input),
+                    isnan(input->fracture_stress_mpa) ? " (Su (1 + D))" : "");
     }
     return text;
 }

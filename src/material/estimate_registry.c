@@ -95,14 +95,13 @@ static bool inputs_known(const nw_estimate *record, const nw_estimate_input *inp
 
 static bool values_usable(const nw_estimate_values *v, char *why, size_t capacity)
 {
-    bool usable = v->fatigue_strength_coefficient_mpa > 0.0 &&
-                  isfinite(v->fatigue_strength_coefficient_mpa) &&
-                  v->fatigue_ductility_coefficient > 0.0 &&
-                  isfinite(v->fatigue_ductility_coefficient) &&
-                  v->fatigue_strength_exponent < 0.0 &&
-                  v->fatigue_ductility_exponent < v->fatigue_strength_exponent &&
-                  v->strength_coefficient_mpa > 0.0 && v->strength_coefficient_mpa <= 1e5 &&
-                  v->hardening_exponent >= 0.005 && v->hardening_exponent <= 0.6;
+    bool usable =
+        v->fatigue_strength_coefficient_mpa > 0.0 &&
+        isfinite(v->fatigue_strength_coefficient_mpa) && v->fatigue_ductility_coefficient > 0.0 &&
+        isfinite(v->fatigue_ductility_coefficient) && v->fatigue_strength_exponent < 0.0 &&
+        v->fatigue_ductility_exponent < v->fatigue_strength_exponent &&
+        v->strength_coefficient_mpa > 0.0 && v->strength_coefficient_mpa <= 1e5 &&
+        v->hardening_exponent >= 0.005 && v->hardening_exponent <= 0.6;
     if (!usable) {
         snprintf(why, capacity,
                  "its values make no curves of use here (sf' %.4g MPa, b %.4g, ef' %.4g, c %.4g, "

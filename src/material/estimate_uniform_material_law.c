@@ -6,11 +6,9 @@
  * Aluminium and titanium alloys:
  *   sf' = 1.67 Su, b = -0.095, ef' = 0.35, c = -0.69, K' = 1.61 Su, n' = 0.11;
  *   endurance 0.42 Su at 1e6 cycles.
+ * K' and n' of the second set are printed so; they are not compatible with b/c.
  */
 #include "material/estimates.h"
-
-#include <math.h>
-#include <stdio.h>
 
 static double ductility_factor(const nw_estimate_input *input)
 {
@@ -18,23 +16,8 @@ static double ductility_factor(const nw_estimate_input *input)
     return ratio <= 0.003 ? 1.0 : 1.375 - 125.0 * ratio;
 }
 
-static bool applies(const nw_estimate_input *input, char *why, size_t capacity)
+static bool limits(const nw_estimate_input *input, char *why, size_t capacity)
 {
-    if (isnan(input->ultimate_strength_mpa)) {
-        snprintf(why, capacity, "ultimate_strength is missing");
-        return false;
-    }
-    if (isnan(input->youngs_modulus_mpa)) {
-        snprintf(why, capacity, "youngs_modulus is missing");
-        return false;
-    }
-    if (input->group != NW_STEEL && input->group != NW_ALUMINIUM && input->group != NW_TITANIUM) {
-        snprintf(why, capacity,
-                 "it was made for unalloyed and low-alloy steels and for aluminium and titanium "
-                 "alloys; the group is %s",
-                 nw_group_name(input->group));
-        return false;
-    }
     if (input->group == NW_STEEL && ductility_factor(input) <= 0.0) {
         snprintf(
             why, capacity,
@@ -58,6 +41,8 @@ static void evaluate(const nw_estimate_input *input, nw_estimate_values *values)
             .fatigue_ductility_exponent = -0.58,
             .strength_coefficient_mpa = 1.65 * su,
             .hardening_exponent = 0.15,
+            .cyclic_curve_origin = NW_FROM_ESTIMATE,
+            .endurance_stress_mpa = 0.45 * su,
             .endurance_strain_amplitude = 0.45 * su / e + 1.95e-4 * psi,
             .endurance_cycles = 5e5,
         };
@@ -69,6 +54,8 @@ static void evaluate(const nw_estimate_input *input, nw_estimate_values *values)
             .fatigue_ductility_exponent = -0.69,
             .strength_coefficient_mpa = 1.61 * su,
             .hardening_exponent = 0.11,
+            .cyclic_curve_origin = NW_FROM_ESTIMATE,
+            .endurance_stress_mpa = 0.42 * su,
             .endurance_strain_amplitude = 0.42 * su / e,
             .endurance_cycles = 1e6,
         };
@@ -79,7 +66,16 @@ const nw_estimate nw_estimate_uniform_material_law = {
     .key = "uniform_material_law",
     .title = "Uniform material law",
     .range = "unalloyed and low-alloy steels with Su/E below 0.011; aluminium and titanium alloys",
+    .equation = "steels: sf' = 1.5 Su, b = -0.087, ef' = 0.59 psi, c = -0.58, K' = 1.65 Su, "
+                "n' = 0.15, psi = 1 up to Su/E = 0.003, else 1.375 - 125 Su/E; aluminium and "
+                "titanium: sf' = 1.67 Su, b = -0.095, ef' = 0.35, c = -0.69, K' = 1.61 Su, "
+                "n' = 0.11",
     .reference = "Baeumel & Seeger, Materials Data for Cyclic Loading, Supplement 1, Elsevier 1990",
-    .applies = applies,
+    .accuracy = "next to the modified universal slopes in a comparison on 116 steels, 16 aluminium "
+                "and 6 titanium alloys (Park & Song, Int. J. Fatigue 17 (1995) 365, abstract)",
+    .check = "formula from memory; agrees with a row printed in Metals 15 (2025) 780",
+    .groups = NW_GROUP_BIT(NW_STEEL) | NW_GROUP_BIT(NW_ALUMINIUM) | NW_GROUP_BIT(NW_TITANIUM),
+    .needs = NW_NEEDS_ULTIMATE | NW_NEEDS_MODULUS,
+    .limits = limits,
     .evaluate = evaluate,
 };

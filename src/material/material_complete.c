@@ -1,10 +1,10 @@
 /* What follows from what is given: the estimate, compatibility of the two curves, and checks that need
  * more than one value. */
 #include "base/fields.h"
+#include "base/text.h"
 #include "material/material_file.h"
 
 #include <math.h>
-#include <stdio.h>
 
 static bool known(double value)
 {
@@ -14,16 +14,15 @@ static bool known(double value)
 static nw_status fill_from_estimate(nw_material *m, const nw_estimate *estimate,
                                     nw_field_reader *reader, const nw_node *map, const char *path)
 {
-    nw_estimate_input input = {m->group, m->ultimate_strength_mpa, m->youngs_modulus_mpa};
+    nw_estimate_input input = nw_estimate_input_of(m);
+    nw_estimate_values values;
     char why[300];
-    if (!estimate->applies(&input, why, sizeof why)) {
+    if (!nw_estimate_apply(estimate, &input, &values, why, sizeof why)) {
         nw_field_fault(reader, map, path, "",
                        "no strain_life, and the estimate %s does not apply: %s", estimate->key,
                        why);
         return NW_INPUT;
     }
-    nw_estimate_values values;
-    estimate->evaluate(&input, &values);
     m->fatigue_strength_coefficient_mpa = values.fatigue_strength_coefficient_mpa;
     m->fatigue_strength_exponent = values.fatigue_strength_exponent;
     m->fatigue_ductility_coefficient = values.fatigue_ductility_coefficient;
@@ -31,7 +30,8 @@ static nw_status fill_from_estimate(nw_material *m, const nw_estimate *estimate,
     m->strain_life_origin = NW_FROM_ESTIMATE;
     m->estimate = estimate->key;
     m->basis = NW_ESTIMATED;
-    if (!known(m->strength_coefficient_mpa) && !known(m->hardening_exponent)) {
+    if (!known(m->strength_coefficient_mpa) && !known(m->hardening_exponent) &&
+        values.cyclic_curve_origin == NW_FROM_ESTIMATE) { /* else compatibility gives the same */
         m->strength_coefficient_mpa = values.strength_coefficient_mpa;
         m->hardening_exponent = values.hardening_exponent;
         m->strength_coefficient_origin = m->hardening_exponent_origin = NW_FROM_ESTIMATE;
@@ -41,7 +41,11 @@ static nw_status fill_from_estimate(nw_material *m, const nw_estimate *estimate,
         m->endurance_cycles = values.endurance_cycles;
     }
     if (m->source[0] == '\0') {
-        snprintf(m->source, sizeof m->source, "estimated: %s", estimate->reference);
+        char inputs[240];
+        nw_text_builder source = nw_text_builder_on(m->source, sizeof m->source);
+        nw_text_add(&source, "estimated by %s from %s: %s", estimate->key,
+                    nw_estimate_inputs_text(estimate, &input, inputs, sizeof inputs),
+                    estimate->reference);
     }
     return NW_OK;
 }
@@ -83,6 +87,12 @@ static void check_set(const nw_material *m, nw_field_reader *reader, const nw_no
         nw_field_fault(reader, map, path, "yield_strength",
                        "found %g MPa, expected at most the ultimate strength (%g MPa)",
                        m->yield_strength_mpa, m->ultimate_strength_mpa);
+    }
+    if (m->fracture_stress_mpa < m->ultimate_strength_mpa) {
+        nw_field_fault(reader, map, path, "fracture_stress",
+                       "found %g MPa, expected the true stress at fracture, which is at least the "
+                       "ultimate strength (%g MPa)",
+                       m->fracture_stress_mpa, m->ultimate_strength_mpa);
     }
     if (known(m->ultimate_strength_mpa) && m->ultimate_strength_mpa > 0.1 * m->youngs_modulus_mpa) {
         nw_field_fault(reader, map, path, "ultimate_strength",

@@ -67,6 +67,7 @@ static const nw_field top_rows[] = {
     {.key = "endurance", .kind = NW_FIELD_OTHER},
     {.key = "scatter", .kind = NW_FIELD_OTHER},
     {.key = "valid", .kind = NW_FIELD_OTHER},
+    {.key = "fit", .kind = NW_FIELD_OTHER}, /* covariance of fitted parameters; not used here */
     {.key = NULL},
 };
 

@@ -1,6 +1,6 @@
 /* Library materials: one file a material, found by its name. */
 #include "base/text.h"
-#include "notchwright/material.h"
+#include "notchwright/library.h"
 
 #include <dirent.h>
 #include <stdio.h>
@@ -73,4 +73,93 @@ nw_status nw_material_find(const char *name, char *path, size_t capacity,
                     "material file",
                     name, nearest[0] == '\0' ? "" : " (did you mean '", nearest,
                     nearest[0] == '\0' ? "" : "'?)");
+}
+
+/* ---- everything there is ---- */
+
+static const char *file_name(const char *path)
+{
+    const char *slash = strrchr(path, '/');
+    return slash == NULL ? path : slash + 1;
+}
+
+static bool has_name(const nw_library *library, size_t count, const char *name)
+{
+    for (size_t i = 0; i < count; i++) {
+        if (strcmp(file_name(library->paths[i]), name) == 0) {
+            return true;
+        }
+    }
+    return false;
+}
+
+static nw_status add_path(nw_library *library, const char *folder, const char *name)
+{
+    size_t size = strlen(folder) + strlen(name) + 2;
+    char **paths = realloc(library->paths, (library->count + 1) * sizeof *paths);
+    char *path = malloc(size);
+    if (paths != NULL) {
+        library->paths = paths;
+    }
+    if (paths == NULL || path == NULL) {
+        free(path);
+        return NW_MEMORY;
+    }
+    snprintf(path, size, "%s/%s", folder, name);
+    library->paths[library->count++] = path;
+    return NW_OK;
+}
+
+/* Names that an earlier folder has are hidden by it. */
+static nw_status add_folder(nw_library *library, const char *folder)
+{
+    DIR *entries = opendir(folder);
+    if (entries == NULL) {
+        return NW_OK;
+    }
+    size_t earlier = library->count;
+    nw_status status = NW_OK;
+    const struct dirent *entry;
+    while (status == NW_OK && (entry = readdir(entries)) != NULL) {
+        if (entry->d_name[0] != '.' && nw_text_ends(entry->d_name, ".yaml") &&
+            !has_name(library, earlier, entry->d_name)) {
+            status = add_path(library, folder, entry->d_name);
+        }
+    }
+    closedir(entries);
+    return status;
+}
+
+static int by_name(const void *a, const void *b)
+{
+    return strcmp(file_name(*(char *const *)a), file_name(*(char *const *)b));
+}
+
+nw_status nw_library_list(nw_library *library, nw_diagnostics *diagnostics)
+{
+    *library = (nw_library){NULL, 0};
+    char buffer[1024];
+    const char *folder;
+    nw_status status = NW_OK;
+    for (size_t i = 0; status == NW_OK && (folder = folder_at(i, buffer, sizeof buffer)) != NULL;
+         i++) {
+        status = add_folder(library, folder);
+    }
+    if (status != NW_OK) {
+        nw_library_clear(library);
+        return nw_fault(diagnostics, status, NULL, NULL, "out of memory listing the library");
+    }
+    if (library->count > 0) {
+        qsort(library->paths, library->count, sizeof library->paths[0], by_name);
+    }
+    return NW_OK;
+}
+
+void nw_library_clear(nw_library *library)
+{
+    for (size_t i = 0; i < library->count; i++) {
+        free(library->paths[i]);
+    }
+    free(library->paths);
+    *library = (nw_library){NULL, 0};
 }

@@ -8,12 +8,14 @@
 
 enum { NUMBER = 40 };
 
-/* Fewest digits that read back to the same double; a decimal point in every locale. */
+/* Fewest digits that read back to the same double, without an exponent for ordinary sizes; a decimal point in
+ * every locale. */
 static char *shortest(double value, char text[NUMBER])
 {
+    bool ordinary = fabs(value) >= 1e-4 && fabs(value) < 1e12;
     for (int digits = 1; digits <= 17; digits++) {
         snprintf(text, NUMBER, "%.*g", digits, value);
-        if (strtod(text, NULL) == value) {
+        if (strtod(text, NULL) == value && !(ordinary && strchr(text, 'e') != NULL)) {
             break;
         }
     }

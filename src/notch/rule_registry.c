@@ -4,8 +4,8 @@
 #include <string.h>
 
 static const nw_notch_rule *const records[] = {
-    &nw_notch_rule_neuber,     &nw_notch_rule_esed,  &nw_notch_rule_linear,
-    &nw_notch_rule_limit_load, &nw_notch_rule_curve,
+    &nw_notch_rule_neuber,     &nw_notch_rule_esed,         &nw_notch_rule_linear,
+    &nw_notch_rule_limit_load, &nw_notch_rule_seeger_beste, &nw_notch_rule_curve,
 };
 
 const nw_notch_rule *nw_notch_rule_at(size_t index)

@@ -41,3 +41,14 @@ json_t *nw_json_cautions(const nw_cautions *cautions)
     }
     return list;
 }
+
+nw_status nw_json_put(FILE *to, json_t *object)
+{
+    if (object == NULL) {
+        return NW_MEMORY;
+    }
+    int failed = json_dumpf(object, to, JSON_INDENT(1) | NW_JSON_FLAGS);
+    json_decref(object);
+    fputc('\n', to);
+    return ferror(to) ? NW_FILE : failed ? NW_MEMORY : NW_OK;
+}

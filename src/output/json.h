@@ -6,6 +6,7 @@
 
 #include <jansson.h>
 #include <math.h>
+#include <stdio.h>
 
 enum { NW_JSON_FLAGS = JSON_REAL_PRECISION(15) };
 
@@ -23,5 +24,9 @@ json_t *nw_json_count(double value);
 
 /* Cautions as [{code, about, text}]. */
 json_t *nw_json_cautions(const nw_cautions *cautions);
+
+/* Writes a whole object, one line an entry, and releases it. NULL (memory ran out while it was built) gives
+ * NW_MEMORY; else NW_OK or NW_FILE. */
+nw_status nw_json_put(FILE *to, json_t *object);
 
 #endif

@@ -228,6 +228,43 @@ static void loops_sum_to_the_totals(void **state)
     for_all(75, totals_law);
 }
 
+typedef struct places {
+    int values[3][LONGEST];
+    size_t count[3];
+} places;
+
+static void assert_place(const places *p, nw_history_place place, const nw_loop_values *v,
+                         double per_value)
+{
+    assert_true(place.event < 3);
+    assert_true(place.sample < p->count[place.event]);
+    double load = per_value * p->values[place.event][place.sample];
+    assert_true(fabs(load - v->load_max_mpa) < 1e-9 || fabs(load - v->load_min_mpa) < 1e-9);
+}
+
+/* Where the tips are said to stand in the histories, their loads stand. */
+static void places_law(test_random *random, const char *path)
+{
+    places p;
+    text t = {.used = 0};
+    add(&t, "notchwright: 1\nmaterial: sae-1045-normalised\nnotch: {kt: 1.5}\nload:\n");
+    for (int e = 0; e < 3; e++) {
+        p.count[e] = random_values(random, p.values[e]);
+        add_event(&t, p.values[e], p.count[e], 1, test_random_int(random, 1, 3));
+    }
+    nw_assessment *a = assess(path, &t, &all);
+    for (size_t i = 0; i < a->loop_count; i++) {
+        assert_place(&p, a->loops[i].start, &a->loops[i].values, 1.5);
+        assert_place(&p, a->loops[i].tip, &a->loops[i].values, 1.5);
+    }
+    nw_assessment_free(a);
+}
+
+static void loads_stand_where_they_are_said_to(void **state)
+{
+    for_all(77, places_law);
+}
+
 /* Asking for the worst loops only gives the first of all loops, and changes no number. */
 static void worst_law(test_random *random, const char *path)
 {
@@ -262,6 +299,7 @@ int main(void)
         cmocka_unit_test(rotation_keeps_damage_per_block),
         cmocka_unit_test(cut_history_is_the_same_block),
         cmocka_unit_test(loops_sum_to_the_totals),
+        cmocka_unit_test(loads_stand_where_they_are_said_to),
         cmocka_unit_test(worst_loops_are_the_first_of_all),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);

@@ -76,8 +76,8 @@ static void curve_built(void **state)
     }
 }
 
-/* A range of 2 L has twice the stress and strain of L: the doubled curve (Masing). The handbook prints
- * 678.503 MPa and 0.005795 for Neuber's rule and a range of 900 MPa. */
+/* A range of 2 L has twice the stress and strain of L, the doubled curve (Masing): 678.503 MPa and 0.005795 for
+ * Neuber's rule and a range of 900 MPa. */
 static void doubled_range(void **state)
 {
     nw_notch_curve *curve = curve_of(&values[0]);

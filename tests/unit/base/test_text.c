@@ -28,11 +28,24 @@ static void nearest_is_what_a_typist_meant(void **state)
     assert_nearest("curve", "curve");
 }
 
+/* A swap of neighbours is one slip: two of a two-letter word would be too many. */
+static void swapped_neighbours_are_one_slip(void **state)
+{
+    const char *const words[] = {"kt", "kf", NULL};
+    assert_string_equal(nw_text_nearest("tk", words), "kt");
+    assert_null(nw_text_nearest("xy", words));
+}
+
 static void far_words_have_no_nearest(void **state)
 {
     assert_nearest("ramberg_osgood", NULL);
     assert_nearest("xyz", NULL);
     assert_nearest("", NULL);
+}
+
+/* A word longer than any key is near to none of them. */
+static void endless_words_have_no_nearest(void **state)
+{
     char long_word[300];
     memset(long_word, 'n', sizeof long_word - 1);
     long_word[sizeof long_word - 1] = '\0';
@@ -107,7 +120,9 @@ int main(void)
 {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(nearest_is_what_a_typist_meant),
+        cmocka_unit_test(swapped_neighbours_are_one_slip),
         cmocka_unit_test(far_words_have_no_nearest),
+        cmocka_unit_test(endless_words_have_no_nearest),
         cmocka_unit_test(the_closer_candidate_wins),
         cmocka_unit_test(builder_never_overruns),
         cmocka_unit_test(copy_cuts_and_ends),

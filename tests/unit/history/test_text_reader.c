@@ -159,19 +159,33 @@ static void files_as_long_as_the_buffer(void **state)
     free(text);
 }
 
-/* Many lines of comment and nothing else before the first value. */
-static void long_comments_first(void **state)
+/* More comment than the buffer holds, before the first line and before the second. */
+static void assert_after_comments(const char *first, const char *values, const char *column)
 {
     size_t lines = 9000, size = 0;
     char *text = malloc(lines * 40);
     assert_non_null(text);
+    size += (size_t)sprintf(text, "%s", first);
     for (size_t i = 0; i < lines; i++) {
         size += (size_t)sprintf(text + size, "# comment line %zu of the logger\n", i);
     }
-    size += (size_t)sprintf(text + size, "1.5\n-2\n3e2\n");
+    size += (size_t)sprintf(text + size, "%s", values);
     assert_true(size > 1 << 18);
-    test_history_holds(test_scratch_write(&scratch, "c.csv", text, size), NULL, '.', three, 3);
+    test_history_holds(test_scratch_write(&scratch, "c.csv", text, size), column, '.', three, 3);
     free(text);
+}
+
+static void long_comments_first(void **state)
+{
+    assert_after_comments("", "1.5\n-2\n3e2\n", NULL);
+    assert_after_comments("", "t,load\n0,1.5\n1,-2\n2,3e2\n", "load");
+    assert_after_comments("1.5\n", "-2\n3e2\n", NULL);
+}
+
+static void long_comments_below_the_header(void **state)
+{
+    assert_after_comments("load\n", "1.5\n-2\n3e2\n", NULL);
+    assert_after_comments("t,load\n", "0,1.5\n1,-2\n2,3e2\n", "load");
 }
 
 static int make_scratch(void **state)
@@ -199,6 +213,7 @@ int main(void)
         cmocka_unit_test(lines_across_the_buffer),
         cmocka_unit_test(files_as_long_as_the_buffer),
         cmocka_unit_test(long_comments_first),
+        cmocka_unit_test(long_comments_below_the_header),
     };
     return cmocka_run_group_tests(tests, make_scratch, remove_scratch);
 }

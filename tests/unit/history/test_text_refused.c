@@ -31,7 +31,12 @@ static void ragged_rows(void **state)
     refused("t,load\n0,1\n1,2,3\n", "load", '.', 3, 1, "3 fields in this row, expected 2");
     refused("t,load\n0,1,2\n", "load", '.', 2, 1, "as in the header");
     refused("1\n2\n2 3\n", NULL, '.', 3, 1, "found '2 3'");
-    refused("1\n2 3\n4 5\n", NULL, '.', 2, 1, "2"); /* the first row says how many there are */
+}
+
+/* Without a header the first row says how many fields there are. */
+static void second_row_is_ragged(void **state)
+{
+    refused("1\n2 3\n4 5\n", NULL, '.', 2, 1, "2");
 }
 
 static void decimal_sign(void **state)
@@ -147,6 +152,7 @@ int main(void)
         cmocka_unit_test(what_is_no_finite_number),
         cmocka_unit_test(ragged_rows),
         cmocka_unit_test(decimal_sign),
+        cmocka_unit_test(second_row_is_ragged),
         cmocka_unit_test(columns),
         cmocka_unit_test(nothing_in_it),
         cmocka_unit_test(other_encodings),

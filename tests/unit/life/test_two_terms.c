@@ -25,7 +25,7 @@ static void transition_life(void **state)
     double transition = pow(t.b / t.a, 1.0 / (t.p - t.q));
     double y = 2.0 * t.a * pow(transition, t.p);
     assert_near(nw_two_terms_reversals(&t, y), transition, 1e-12, 0.0);
-    assert_near(transition, 8.53e3, 0.0, 0.005e3); /* handbook value for these constants */
+    assert_near(transition, 8.53e3, 0.0, 0.005e3); /* worked for these constants */
 }
 
 static void longer_life_for_less(void **state)

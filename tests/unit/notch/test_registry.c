@@ -26,7 +26,7 @@ static void notch_rules(void **state)
         assert_ptr_equal(nw_notch_rule_find(r->key), r);
         assert_int_equal(r->residual == NULL, r->is_table);
     }
-    assert_int_equal(i, 5);
+    assert_true(i >= 5);
     assert_null(nw_notch_rule_at(1000));
     assert_null(nw_notch_rule_find("nueber"));
 }
@@ -42,7 +42,7 @@ static void corrections(void **state)
         assert_ptr_equal(nw_correction_find(r->key), r);
         assert_true(r->terms != NULL && r->prepare != NULL);
     }
-    assert_int_equal(i, 5);
+    assert_true(i >= 5);
     assert_null(nw_correction_at(1000));
     assert_null(nw_correction_find(""));
 }
