@@ -348,13 +348,12 @@ static bool is_header(text_file *file, const char *line, const char *end, const 
 
 /* Moves to the next line with content, reading on as far as needed: comments may be long. */
 static nw_status find_content(text_file *file, nw_input *input, const char **line_end,
-                              nw_diagnostics *diagnostics)
+                              const char *found_at_end, nw_diagnostics *diagnostics)
 {
     *line_end = NULL;
     while (!seek_content(file, line_end)) {
         if (file->source_ended) {
-            return nw_input_fault(input, file->line, 1, NW_INPUT, diagnostics,
-                                  "found no values, expected at least one");
+            return nw_input_fault(input, file->line, 1, NW_INPUT, diagnostics, "%s", found_at_end);
         }
         nw_status status = fill(file, input, diagnostics);
         if (status != NW_OK) {
@@ -376,23 +375,48 @@ static void set_columns(text_file *file, const char *line, const char *end)
     file->layout.columns = nw_text_count_fields(&file->layout, line, end);
 }
 
-static nw_status pass_header(text_file *file, nw_input *input, const char *end,
-                             const text_file *second, bool has_second, nw_diagnostics *diagnostics)
+/* The header, which stands in a copy of its own, against the first row of data at `file`. */
+static nw_status use_header(text_file *file, nw_input *input, const char *header,
+                            size_t header_line, const char *wanted, nw_diagnostics *diagnostics)
 {
-    if (!has_second) {
-        return nw_input_fault(input, file->line + 1, 1, NW_INPUT, diagnostics,
-                              "found a header and no values, expected at least one row");
-    }
-    size_t names = nw_text_count_fields(&file->layout, file->at, end);
+    const char *end = header + strlen(header);
+    size_t names = nw_text_count_fields(&file->layout, header, end), data_line = file->line;
     if (names != file->layout.columns) {
-        return nw_input_fault(input, second->line, 1, NW_INPUT, diagnostics,
+        return nw_input_fault(input, data_line, 1, NW_INPUT, diagnostics,
                               "found %zu field%s in this row, expected %zu as in the header",
                               file->layout.columns, file->layout.columns == 1 ? "" : "s", names);
     }
-    note_unit(file, input, file->at, end);
-    file->at = second->at;
-    file->line = second->line;
-    return NW_OK;
+    file->line = header_line;
+    nw_status status = choose_column(file, input, header, end, wanted, diagnostics);
+    file->line = data_line;
+    if (status == NW_OK) {
+        note_unit(file, input, header, end);
+    }
+    return status;
+}
+
+static nw_status read_header(text_file *file, nw_input *input, const char *end,
+                             const char *first_end, const char *wanted, nw_diagnostics *diagnostics)
+{
+    size_t length = (size_t)(end - file->at), line = file->line;
+    char *header = malloc(length + 1);
+    if (header == NULL) {
+        return nw_input_fault(input, 0, 0, NW_MEMORY, diagnostics, "out of memory");
+    }
+    memcpy(header, file->at, length);
+    header[length] = '\0';
+    file->at += first_end - file->at + 1;
+    file->line++;
+    const char *data_end;
+    nw_status status =
+        find_content(file, input, &data_end,
+                     "found a header and no values, expected at least one row", diagnostics);
+    if (status == NW_OK) {
+        set_columns(file, file->at, nw_text_content_end(file->at, data_end));
+        status = use_header(file, input, header, line, wanted, diagnostics);
+    }
+    free(header);
+    return status;
 }
 
 /* The first row of data tells the delimiter: names in a header may hold blanks. */
@@ -400,29 +424,24 @@ static nw_status find_layout(text_file *file, nw_input *input, const nw_history_
                              nw_diagnostics *diagnostics)
 {
     const char *first_end, *data_end;
-    nw_status status = find_content(file, input, &first_end, diagnostics);
+    nw_status status = find_content(file, input, &first_end,
+                                    "found no values, expected at least one", diagnostics);
     if (status != NW_OK) {
         return status;
     }
+    const char *end = nw_text_content_end(file->at, first_end);
     text_file second = *file;
     second.at = file->at + (first_end - file->at) + 1;
-    second.line++;
-    bool has_second = seek_content(&second, &data_end);
-    const char *end = nw_text_content_end(file->at, first_end);
-    if (has_second) {
+    set_columns(file, file->at, end);
+    if (seek_content(&second, &data_end)) {
         set_columns(file, second.at, nw_text_content_end(second.at, data_end));
-    } else {
-        set_columns(file, file->at, end);
     }
     file->layout.has_header = is_header(file, file->at, end, options->column);
-    if (!file->layout.has_header) {
-        set_columns(file, file->at, end);
+    if (file->layout.has_header) {
+        return read_header(file, input, end, first_end, options->column, diagnostics);
     }
-    status = choose_column(file, input, file->at, end, options->column, diagnostics);
-    if (status == NW_OK && file->layout.has_header) {
-        status = pass_header(file, input, end, &second, has_second, diagnostics);
-    }
-    return status;
+    set_columns(file, file->at, end);
+    return choose_column(file, input, file->at, end, options->column, diagnostics);
 }
 
 static nw_status open_text(text_file *file, nw_input *input, const nw_history_options *options,

@@ -67,6 +67,28 @@ static void scatter_by_chi_square(nw_fit *fit)
     fit->log10_life_sd_high = sd * sqrt(nu / nw_chi_square_quantile(tail, nu));
 }
 
+/* Sum of the leverages of the failures: the degrees of freedom that the two lines take up. Where both say the
+ * same of every test (compatible stress and plastic strain) that is two, not four. */
+static double degrees_taken(const nw_fit_work *work, const double plain[4])
+{
+    nw_fit_sums unit = work->sums;
+    double both = sqrt(unit.elastic_variance * unit.plastic_variance);
+    unit.cross_covariance = both > 0.0 ? unit.cross_covariance / both : 1.0;
+    unit.elastic_variance = unit.plastic_variance = 1.0;
+    double covariance[16], sum = 0.0;
+    const nw_fit *fit = work->fit;
+    if (!nw_fit_lines_covariance(&unit, &fit->elastic.line, &fit->plastic.line, covariance)) {
+        return 4.0;
+    }
+    for (size_t i = 0; i < work->count; i++) {
+        nw_fit_root root;
+        if (!work->tests[i].runout && nw_fit_root_at(plain, log(work->tests[i].strain), &root)) {
+            sum += nw_small_form(covariance, 4, root.gradient) / (M_LN10 * M_LN10);
+        }
+    }
+    return fmin(fmax(sum, 2.0), 4.0);
+}
+
 /* Scatter of the failures about the curve of the two lines. */
 static void scatter_of_lines(nw_fit_work *work)
 {
@@ -83,7 +105,7 @@ static void scatter_of_lines(nw_fit_work *work)
             count += 1.0;
         }
     }
-    fit->degrees = count - 4.0;
+    fit->degrees = count - degrees_taken(work, plain);
     if (fit->degrees > 0.0) {
         fit->log10_life_sd = fit->log10_life_sd_corrected = sqrt(squares / fit->degrees);
         scatter_by_chi_square(fit);

@@ -9,7 +9,7 @@ static const double half_pi = 1.57079632679489661923;
 
 /* u/(pi/2) up to which the equation is used as it stands: past it, and so past the pole, a straight line goes
  * on, which brings Newton's method back. */
-static const double last_share = 1.0 - 1e-6;
+static const double last_share = 1.0 - 1e-3;
 
 /* Kp from 1 to here: the notch yields with its section, s = L. */
 static const double no_notch = 1e-6;

@@ -289,7 +289,7 @@ def refuse_uncovered(case):
 
 
 def read_life(entry, material):
-    life = {"mean_stress": entry.get("mean_stress", "none"),
+    life = {"mean_stress": entry.get("mean_stress", "swt"),
             "damage_sum": float(entry.get("damage_sum", 1.0)),
             "below_endurance": entry.get("below_endurance", "damages"),
             "walker_gamma": None}

@@ -20,7 +20,7 @@
 #include <string.h>
 
 /* Fails unless |found - expected| <= relative |expected| + absolute. */
-#define assert_near(found, expected, relative, absolute)                                           \
+#define assert_near(found, expected, relative, absolute) \
     test_near(#found, (found), (expected), (relative), (absolute), __FILE__, __LINE__)
 void test_near(const char *what, double found, double expected, double relative, double absolute,
                const char *file, int line);
