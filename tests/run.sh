@@ -17,7 +17,7 @@ case $#,${1-} in
 esac
 
 install_build_packages libcmocka-dev python3
-build_tree "$tree" RelWithDebInfo -DNOTCHWRIGHT_SANITIZE="$sanitize"
+build_tree "$tree" RelWithDebInfo -DNOTCHWRIGHT_TESTS=ON -DNOTCHWRIGHT_SANITIZE="$sanitize"
 
 # The first undefined behaviour ends a test; by default it would only be printed.
 UBSAN_OPTIONS=${UBSAN_OPTIONS:-halt_on_error=1:print_stacktrace=1}

@@ -51,7 +51,7 @@ const nw_estimate nw_estimate_modified_four_point = {
     .reference = "Ong, Int. J. Fatigue 15 (1993) 213",
     .accuracy = "next to the modified universal slopes in a comparison on 116 steels, 16 aluminium "
                 "and 6 titanium alloys (Park & Song, Int. J. Fatigue 17 (1995) 365, abstract)",
-    .check = "formula from memory; agrees with a row printed in Metals 15 (2025) 780",
+    .check = "formula from memory; agrees but for c with a row printed in Metals 15 (2025) 780",
     .doubt = "Its c misses the one printed value, -0.6466, by 0.0006. For large D some "
              "authors cap it or reject the method.",
     .groups = NW_GROUP_BIT(NW_STEEL),

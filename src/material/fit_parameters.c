@@ -181,21 +181,57 @@ static void by_likelihood(nw_fit *fit)
 
 /* ---- cyclic curve ---- */
 
-static void direct(nw_fit *fit)
+/* Standard errors of the cyclic line. Where plastic strain is total minus stress/E, an error d of log stress moves
+ * log plastic strain by -d stress/(E ep), so the residual is f d with f = 1 + n' stress/(E ep): the points of
+ * small plastic strain scatter more, and least squares must be told by how much. f = 1 where it was measured. */
+static void errors_of_cyclic_line(const nw_fit_work *work, double *error_a, double *error_b)
 {
+    const nw_fit *fit = work->fit;
+    const nw_line *line = &fit->cyclic.line;
+    double squares = 0.0, expected = 0.0, of_a = 0.0, of_b = 0.0, n = (double)line->points;
+    size_t next = 0; /* left_out is in the order of the tests */
+    for (size_t i = 0; i < work->count; i++) {
+        const nw_fit_test *t = &work->tests[i];
+        if (next < fit->cyclic.left_out_count && fit->cyclic.left_out[next].test == t->index) {
+            next++;
+            continue;
+        }
+        double dx = log10(t->plastic) - line->x_mean;
+        double r = log10(t->stress_mpa) - line->y_mean - line->b * dx;
+        bool measured = !isnan(work->coupons->tests[t->index].plastic_strain_amplitude);
+        double f =
+            measured ? 1.0 : 1.0 + line->b * t->stress_mpa / (fit->youngs_modulus_mpa * t->plastic);
+        double to_a = 1.0 / n - line->x_mean * dx / line->sxx, to_b = dx / line->sxx;
+        squares += r * r;
+        expected += f * f * (1.0 - 1.0 / n - dx * dx / line->sxx);
+        of_a += f * f * to_a * to_a;
+        of_b += f * f * to_b * to_b;
+    }
+    double variance = line->degrees > 0.0 ? squares / expected : NAN;
+    *error_a = sqrt(variance * of_a);
+    *error_b = sqrt(variance * of_b);
+}
+
+static void direct(nw_fit_work *work)
+{
+    nw_fit *fit = work->fit;
     const nw_line *line = &fit->cyclic.line;
     nw_fit_parameter *k = &fit->parameter[NW_FIT_CYCLIC_COEFFICIENT];
     nw_fit_parameter *n = &fit->parameter[NW_FIT_CYCLIC_EXPONENT];
+    double error_a, error_b, t = student(fit, line->degrees);
+    errors_of_cyclic_line(work, &error_a, &error_b);
     k->value = pow(10.0, line->a);
-    k->standard_error = k->value * M_LN10 * line->a_standard_error;
-    k->low = pow(10.0, line->a_low);
-    k->high = pow(10.0, line->a_high);
+    k->standard_error = k->value * M_LN10 * error_a;
+    k->low = pow(10.0, line->a - t * error_a);
+    k->high = pow(10.0, line->a + t * error_a);
     n->value = line->b;
-    n->standard_error = line->b_standard_error;
-    n->low = line->b_low;
-    n->high = line->b_high;
+    n->standard_error = error_b;
+    n->low = line->b - t * error_b;
+    n->high = line->b + t * error_b;
     k->from = n->from = "direct";
-    k->limits_by = n->limits_by = by_t;
+    k->limits_by = n->limits_by = fit->plastic_computed > 0
+                                      ? "Student's t, error of stress carried into plastic strain"
+                                      : by_t;
 }
 
 /* n' = b/c and ln K' = ln sf' - (b/c) ln ef', with errors by the linearised formulas. */
@@ -237,8 +273,9 @@ static double disagreement(const nw_fit *fit)
     return most;
 }
 
-static void cyclic_curve(nw_fit *fit)
+static void cyclic_curve(nw_fit_work *work)
 {
+    nw_fit *fit = work->fit;
     bool whole = !isnan(fit->theta[0]) && !isnan(fit->theta[2]);
     if (whole) {
         fit->compatible_exponent = fit->theta[1] / fit->theta[3];
@@ -246,7 +283,7 @@ static void cyclic_curve(nw_fit *fit)
             exp(fit->theta[0] - fit->compatible_exponent * fit->theta[2]);
     }
     if (fit->cyclic.available) {
-        direct(fit);
+        direct(work);
     } else if (whole) {
         compatible(fit);
     }
@@ -263,5 +300,5 @@ void nw_fit_parameters(nw_fit_work *work)
     } else {
         by_lines(work);
     }
-    cyclic_curve(fit);
+    cyclic_curve(work);
 }
