@@ -5,7 +5,7 @@
 # Writes, beside itself:
 #   fit_nelson.csv, fit_made_1.csv, fit_made_2.csv   data for the censored regressions (x, life, runout)
 #   fit_made_curve.csv                               coupon tests for the strain-life curve
-#   fit_reference.csv                                dataset, model, quantity, value
+#   fit_reference.csv                                dataset, model, quantity, value (tolerance factors too)
 # Censored regressions are by survival::survreg. The strain-life curve has no such function: its likelihood is
 # written out below and maximised by optim(), polished by Newton steps on numerical derivatives.
 #
@@ -155,6 +155,15 @@ for (distribution in c("lognormal", "weibull")) {
     }
     record("made_curve", model, "log_likelihood", f(u))
     record("made_curve", model, "aic", 2 * length(u) - 2 * f(u))
+  }
+}
+# ---- one-sided tolerance factors: quantiles of R's own noncentral t (algorithm AS 243) ----
+for (n in c(3, 5, 10, 30, 100)) {
+  for (survival in c(0.5, 0.9, 0.99)) {
+    for (confidence in c(0.05, 0.5, 0.9, 0.99)) {
+      factor <- qt(confidence, n - 1, qnorm(survival) * sqrt(n)) / sqrt(n)
+      record("tolerance", sprintf("n%g_%g", n, survival), sprintf("confidence_%g", confidence), factor)
+    }
   }
 }
 write.csv(rows, out("fit_reference.csv"), row.names = FALSE, quote = FALSE)

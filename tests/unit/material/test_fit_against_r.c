@@ -160,12 +160,30 @@ static void strain_life_curve(void **state)
     nw_fit_free(fit);
 }
 
+/* Tolerance factors by R's noncentral t, which sums another series (AS 243). */
+static void tolerance(void **state)
+{
+    (void)state;
+    static const int sizes[] = {3, 5, 10, 30, 100};
+    static const double survivals[] = {0.5, 0.9, 0.99}, confidences[] = {0.05, 0.5, 0.9, 0.99};
+    for (int i = 0; i < 5 * 3 * 4; i++) {
+        int n = sizes[i / 12];
+        double survival = survivals[i / 4 % 3], confidence = confidences[i % 4];
+        char model[40], key[40];
+        snprintf(model, sizeof model, "n%d_%g", n, survival);
+        snprintf(key, sizeof key, "confidence_%g", confidence);
+        assert_near(nw_tolerance_factor(survival, confidence, 1.0 / n, n - 1.0),
+                    reference("tolerance", model, key), 1e-8, 1e-9);
+    }
+}
+
 int main(void)
 {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(survreg),
         cmocka_unit_test(superalloy),
         cmocka_unit_test(strain_life_curve),
+        cmocka_unit_test(tolerance),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
