@@ -93,7 +93,8 @@ NW_API nw_status nw_material_read(const char *path, nw_material *material,
 NW_API nw_status nw_material_write(FILE *to, const nw_material *material);
 
 /* Finds a library material by name: in the folders of the environment variable
- * NOTCHWRIGHT_MATERIALS (separated by ':'), then in the folder installed with the library, then in
+ * NOTCHWRIGHT_MATERIALS (separated by ":"), then in ../share/notchwright/materials seen from the program, then
+ * in the folder installed with the library, then in
  * `materials/` of the source tree it was built from.
  *   path  receives the file found, `capacity` characters
  * Returns NW_OK, or NW_INPUT with the nearest known name in the fault. */

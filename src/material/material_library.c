@@ -8,6 +8,24 @@
 #include <string.h>
 #include <unistd.h>
 
+/* "../share/notchwright/materials" seen from the program's own folder, so that an installed tree can be moved;
+ * NULL where the system does not tell. */
+static const char *folder_beside_program(char *buffer, size_t capacity)
+{
+    static const char tail[] = "/../share/notchwright/materials";
+    ssize_t length = readlink("/proc/self/exe", buffer, capacity - sizeof tail);
+    if (length <= 0) {
+        return NULL;
+    }
+    buffer[length] = '\0';
+    char *slash = strrchr(buffer, '/');
+    if (slash == NULL) {
+        return NULL;
+    }
+    memcpy(slash, tail, sizeof tail);
+    return buffer;
+}
+
 /* Folders to look in, in order; the build sets the last two. */
 static const char *folder_at(size_t index, char *buffer, size_t capacity)
 {
@@ -20,7 +38,11 @@ static const char *folder_at(size_t index, char *buffer, size_t capacity)
         }
         list += length + (list[length] == ':');
     }
-    return index == 0 ? NW_INSTALLED_MATERIALS : index == 1 ? NW_SOURCE_MATERIALS : NULL;
+    if (index == 0) {
+        const char *beside = folder_beside_program(buffer, capacity);
+        return beside != NULL ? beside : NW_INSTALLED_MATERIALS;
+    }
+    return index == 1 ? NW_INSTALLED_MATERIALS : index == 2 ? NW_SOURCE_MATERIALS : NULL;
 }
 
 static bool is_plain_name(const char *name)
