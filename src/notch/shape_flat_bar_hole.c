@@ -105,7 +105,7 @@ static double plate_modulus(const nw_sizes *sizes)
 
 /* ---- finite elements ---- */
 
-static const char finite_elements[] =
+const char nw_hole_reference_how[] =
     "interpolated between solved widths by a cubic through the four nearest (converged finite "
     "elements, plane stress)";
 
@@ -130,7 +130,7 @@ static double interpolated(const double (*nodes)[2], int count, double x)
     return sum;
 }
 
-static double tension_reference(const void *data, const nw_sizes *sizes, double *error_percent)
+double nw_hole_tension_reference(const void *data, const nw_sizes *sizes, double *error_percent)
 {
     (void)data;
     static const double nodes[][2] = {{0.0, 3.0},   {0.02, 2.942}, {0.1, 2.7325}, {0.2, 2.522},
@@ -172,8 +172,8 @@ static const nw_shape_load tension = {
     .nominal_needs_h = true,
     .section = net_area,
     .formulas = tension_formulas,
-    .reference = tension_reference,
-    .reference_how = finite_elements,
+    .reference = nw_hole_tension_reference,
+    .reference_how = nw_hole_reference_how,
     .gradient = nw_gradient_hole,
     .gradient_source = nw_gradient_kirsch,
 };
@@ -187,7 +187,7 @@ static const nw_shape_load bending = {
     .section = hole_edge_modulus,
     .formulas = bending_formulas,
     .reference = bending_reference,
-    .reference_how = finite_elements,
+    .reference_how = nw_hole_reference_how,
     .check = check_outer_edge,
 };
 

@@ -30,6 +30,9 @@ static const nw_kt_formula peterson = {
     .equation = "Kt = C1 + C2 y + C3 y^2 + C4 y^3, Ci polynomials in c/e, y = r/c",
     .source = nw_source_peterson_memory,
     .ranges = {{"r/c", hole_to_edge, 0.0, 0.5}, {"c/e", offset, 0.0, 1.0}},
+    .fe_points = 3, /* central: r/c = 0.1, 0.3, 0.5 */
+    .fe_low_percent = -1.3,
+    .fe_high_percent = 0.1,
     .kt = sjostrom_kt,
 };
 
@@ -44,6 +47,13 @@ static double net_over_gross(const nw_sizes *sizes)
     return 1.0 / (1.0 - nw_ratio_hole_width(sizes));
 }
 
+/* Only the central hole was solved. */
+static double central_reference(const void *data, const nw_sizes *sizes, double *error_percent)
+{
+    double kt = nw_hole_tension_reference(data, sizes, error_percent);
+    return fabs(offset(sizes) - 1.0) < 1e-6 ? kt * net_over_gross(sizes) : NAN;
+}
+
 static const nw_kt_formula *const tension_formulas[] = {&peterson, NULL};
 
 static const nw_shape_load tension = {
@@ -54,6 +64,8 @@ static const nw_shape_load tension = {
     .nominal_needs_h = true,
     .section = gross_area,
     .formulas = tension_formulas,
+    .reference = central_reference,
+    .reference_how = nw_hole_reference_how,
     .plain = net_over_gross,
     .gradient = nw_gradient_hole,
     .gradient_source = nw_gradient_kirsch,

@@ -126,6 +126,10 @@ extern const nw_kt_surface nw_kt_surface_edge_notch_tension;
 extern const nw_kt_surface nw_kt_surface_edge_notch_gross_line;
 extern const nw_kt_surface nw_kt_surface_edge_notch_bending;
 
+/* Central hole in tension, on net stress (shape_flat_bar_hole.c). */
+double nw_hole_tension_reference(const void *data, const nw_sizes *sizes, double *error_percent);
+extern const char nw_hole_reference_how[];
+
 /* `reference` of a load whose reference_data is a surface. */
 double nw_kt_surface_at(const void *surface, const nw_sizes *sizes, double *error_percent);
 

@@ -102,7 +102,7 @@ nw_status nw_write_shapes_text(FILE *to, const nw_shape *only)
 /* Appends and takes over both; NULL when memory ran out. */
 static json_t *append(json_t *list, json_t *item)
 {
-    if (list == NULL || item == NULL || json_array_append_new(list, item) != 0) {
+    if (json_array_append_new(list, item) != 0) { /* takes the item whatever comes */
         json_decref(list);
         return NULL;
     }

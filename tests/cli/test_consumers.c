@@ -93,7 +93,8 @@ static void cmake_finds_it(void **state)
 {
     (void)state;
     SKIP_WHEN_SANITIZED();
-    run("configure", "'" TEST_CMAKE "' -S '" CONSUMER "' -B by_cmake -DCMAKE_PREFIX_PATH=\"$P\" "
+    run("configure", "'" TEST_CMAKE "' -S '" CONSUMER "' -B by_cmake -G '" TEST_GENERATOR
+                     "' -DCMAKE_PREFIX_PATH=\"$P\" "
                      "-DCMAKE_C_COMPILER='" TEST_COMPILER "' -DCMAKE_BUILD_TYPE=Release");
     run("build", "'" TEST_CMAKE "' --build by_cmake");
     assert_same_result("by_cmake/consumer_static");
@@ -109,9 +110,8 @@ static void cmake_refuses_another_major_version(void **state)
     run("version 2",
         "mkdir -p later && sed 's/notchwright 1 /notchwright 2 /' '" CONSUMER
         "/CMakeLists.txt' >later/CMakeLists.txt && cp '" CONSUMER
-        "/consumer.c' later && ! '" TEST_CMAKE
-        "' -S later -B by_cmake_2 -DCMAKE_PREFIX_PATH=\"$P\" -DCMAKE_C_COMPILER='" TEST_COMPILER
-        "'");
+        "/consumer.c' later && ! '" TEST_CMAKE "' -S later -B by_cmake_2 -G '" TEST_GENERATOR
+        "' -DCMAKE_PREFIX_PATH=\"$P\" -DCMAKE_C_COMPILER='" TEST_COMPILER "'");
 }
 
 /* Sets PKG_CONFIG_PATH to the installed folder of .pc files. */

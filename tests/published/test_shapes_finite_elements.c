@@ -295,6 +295,25 @@ static void hole(void **state)
     }
 }
 
+/* A central hole as one off the middle, on gross stress: 3.036, 3.374, 4.347 at r/c = 0.1, 0.3, 0.5. */
+static void hole_off_the_middle(void **state)
+{
+    static const double rows[][2] = {{0.1, 3.036}, {0.3, 3.374}, {0.5, 4.347}};
+    for (int i = 0; i < 3; i++) {
+        nw_sizes sizes = nw_sizes_unknown();
+        sizes.value[NW_SIZE_R] = rows[i][0];
+        sizes.value[NW_SIZE_C] = sizes.value[NW_SIZE_E] = 1.0;
+        nw_kt kt = test_kt("flat_bar_offset_hole", "tension", NULL, &sizes);
+        assert_near(kt.reference, rows[i][1], 0.0, 0.0006);
+        double percent = 100.0 * (kt.kt / rows[i][1] - 1.0);
+        assert_true(percent >= kt.formula->fe_low_percent &&
+                    percent <= kt.formula->fe_high_percent);
+        sizes.value[NW_SIZE_E] = 1.5;
+        kt = test_kt("flat_bar_offset_hole", "tension", NULL, &sizes);
+        assert_true(isnan(kt.reference));
+    }
+}
+
 /* Outside of the solved points nothing is claimed. */
 static void nothing_is_claimed_elsewhere(void **state)
 {
@@ -315,6 +334,7 @@ int main(void)
         cmocka_unit_test(third_program),
         cmocka_unit_test(edge_notch_gross_line),
         cmocka_unit_test(hole),
+        cmocka_unit_test(hole_off_the_middle),
         cmocka_unit_test(nothing_is_claimed_elsewhere),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
