@@ -372,6 +372,68 @@ static void plan(void **state)
     }
 }
 
+/* Where stress and plastic strain say the same of every test, the two lines are one: the curve's limits are those of a
+ * single line with n - 2 degrees of freedom. Student's t: 97.5 % for 16 and 17 degrees, any table. */
+static const double t_16 = 2.119905299, t_17 = 2.109815578;
+
+static nw_fit *one_line(nw_line *line, nw_fit_options o)
+{
+    nw_coupon tests[MOST];
+    double x[MOST], y[MOST];
+    test_random random = {37};
+    nw_coupons coupons = made(&steel, tests, &random, 6, 3);
+    for (size_t i = 0; i < coupons.count; i++) {
+        x[i] = log10(tests[i].stress_amplitude_mpa);
+        y[i] = log10(tests[i].cycles);
+    }
+    assert_int_equal(nw_line_fit(x, y, NULL, coupons.count, 0.95, line), NW_OK);
+    o.method = NW_FIT_LINES;
+    return fit_of(&coupons, o);
+}
+
+static void compatible_lines(void **state)
+{
+    (void)state;
+    nw_line line;
+    nw_fit *fit = one_line(&line, options_for(&steel));
+    assert_near(fit->degrees, 16.0, 1e-9, 0.0);
+    assert_near(fit->log10_life_sd, line.sd, 1e-9, 0.0);
+    for (double cycles = 100.0; cycles < 2e6; cycles *= 7.0) {
+        nw_coupon at = point(&steel, cycles, 1);
+        double limits[2], dx = log10(at.stress_amplitude_mpa) - line.x_mean;
+        double life = nw_fit_life(fit, at.strain_amplitude, 0.5, 0.95, limits);
+        double half = t_16 * line.sd * sqrt(1.0 / 18.0 + dx * dx / line.sxx);
+        assert_near(log10(life), line.y_mean + line.b * dx, 1e-9, 0.0);
+        assert_near(log10(limits[1] / life), half, 1e-7, 0.0);
+        assert_near(log10(life / limits[0]), half, 1e-7, 0.0);
+    }
+    nw_fit_free(fit);
+}
+
+/* The first planned test is where a search over all amplitudes puts it. */
+static void plan_is_best(void **state)
+{
+    (void)state;
+    nw_line line;
+    nw_fit_options o = options_for(&steel);
+    o.plan_cycles = 2000.0;
+    o.plan_tests = 1;
+    for (int i = 0; i < 3; i++, o.plan_cycles *= 6.0) {
+        nw_fit *fit = one_line(&line, o);
+        double n = line.points, wanted = (log10(o.plan_cycles) - line.a) / line.b;
+        double least = INFINITY;
+        for (double x = line.x_min; x <= line.x_max; x += (line.x_max - line.x_min) / 4000.0) {
+            double dx = x - line.x_mean, mean = line.x_mean + dx / (n + 1.0);
+            double sxx = line.sxx + dx * dx * n / (n + 1.0);
+            double variance = 1.0 / (n + 1.0) + (wanted - mean) * (wanted - mean) / sxx;
+            least = fmin(least, variance);
+        }
+        double expected = pow(10.0, t_17 * line.sd * sqrt(least));
+        assert_near(fit->plan.factor_after[1], expected, 2e-4, 0.0);
+        nw_fit_free(fit);
+    }
+}
+
 /* Levels, replication and what they are customarily good for. */
 static void programme(void **state)
 {
@@ -407,6 +469,8 @@ int main(void)
         cmocka_unit_test(left_out),
         cmocka_unit_test(curves_in_order),
         cmocka_unit_test(plan),
+        cmocka_unit_test(compatible_lines),
+        cmocka_unit_test(plan_is_best),
         cmocka_unit_test(programme),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
