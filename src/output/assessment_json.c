@@ -20,53 +20,11 @@ static json_t *method_object(const nw_case *input, const nw_assessment *result)
         input->surface_factor, "survival", input->survival);
 }
 
-static json_t *pair(const double *values)
-{
-    return json_pack("[o, o]", nw_json_number(values[0]), nw_json_number(values[1]));
-}
-
 static json_t *material_object(const nw_case *input, const nw_assessment *result)
 {
-    const nw_material *m = &input->material;
-    json_t *object = json_pack("{s:o, s:s, s:s, s:o, s:o}", "name", nw_json_text(m->name), "group",
-                               nw_group_name(m->group), "basis", nw_basis_name(m->basis), "source",
-                               nw_json_text(m->source), "estimate", nw_json_text(m->estimate));
-    if (object == NULL) {
-        return NULL;
-    }
-    const struct {
-        const char *key;
-        double value;
-    } numbers[] = {
-        {"youngs_modulus_mpa", m->youngs_modulus_mpa},
-        {"poisson_ratio", m->poisson_ratio},
-        {"yield_strength_mpa", m->yield_strength_mpa},
-        {"ultimate_strength_mpa", m->ultimate_strength_mpa},
-        {"reduction_of_area", m->reduction_of_area},
-        {"hardness_hb", m->hardness_hb},
-        {"strength_coefficient_mpa", m->strength_coefficient_mpa},
-        {"hardening_exponent", m->hardening_exponent},
-        {"fatigue_strength_coefficient_mpa", m->fatigue_strength_coefficient_mpa},
-        {"fatigue_strength_exponent", m->fatigue_strength_exponent},
-        {"fatigue_strength_exponent_used", result->curve.fatigue_strength_exponent},
-        {"fatigue_ductility_coefficient", m->fatigue_ductility_coefficient},
-        {"fatigue_ductility_exponent", m->fatigue_ductility_exponent},
-        {"endurance_strain_amplitude", m->endurance_strain_amplitude},
-        {"endurance_cycles", m->endurance_cycles},
-        {"log10_life_sd", m->log10_life_sd},
-    };
-    int failed = 0;
-    for (size_t i = 0; i < sizeof numbers / sizeof numbers[0]; i++) {
-        failed |= json_object_set_new(object, numbers[i].key, nw_json_number(numbers[i].value));
-    }
-    failed |= json_object_set_new(object, "strength_coefficient_from",
-                                  json_string(nw_origin_name(m->strength_coefficient_origin)));
-    failed |= json_object_set_new(object, "hardening_exponent_from",
-                                  json_string(nw_origin_name(m->hardening_exponent_origin)));
-    failed |= json_object_set_new(object, "valid_cycles", pair(m->valid_cycles));
-    failed |=
-        json_object_set_new(object, "valid_strain_amplitude", pair(m->valid_strain_amplitude));
-    if (failed) {
+    json_t *object = nw_json_material(&input->material);
+    if (json_object_set_new(object, "fatigue_strength_exponent_used",
+                            json_real(result->curve.fatigue_strength_exponent)) != 0) {
         json_decref(object);
         return NULL;
     }

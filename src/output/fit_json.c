@@ -213,11 +213,11 @@ static json_t *curve_object(const nw_fit_curve *curve)
         const nw_fit_point *p = &curve->points[i];
         json_t *item = json_pack("{s:f, s:o}", "strain_amplitude", p->strain_amplitude, "cycles",
                                  nw_json_number(p->cycles));
-        if (item != NULL && !curve->tolerance) {
-            json_object_set_new(item, "low", nw_json_number(p->low));
-            json_object_set_new(item, "high", nw_json_number(p->high));
-        }
         filled = append(points, item);
+        if (filled && !curve->tolerance) {
+            filled = json_object_set_new(item, "low", nw_json_number(p->low)) == 0 &&
+                     json_object_set_new(item, "high", nw_json_number(p->high)) == 0;
+        }
     }
     return json_pack("{s:s, s:o, s:f, s:o, s:o}", "kind",
                      curve->tolerance ? "tolerance" : "percentile", "percentile",

@@ -51,7 +51,9 @@ static void write_tests(FILE *to, const nw_coupons *coupons, const nw_fit *fit)
     if (!isnan(fit->youngs_modulus_mpa)) {
         nw_text_add(&out, "%sE %.6g MPa", out.length == 0 ? "" : "; ", fit->youngs_modulus_mpa);
     }
-    nw_page_paragraph(to, "         ", line);
+    if (out.length > 0) {
+        nw_page_paragraph(to, "         ", line);
+    }
     for (size_t i = 0; i < fit->dropped_count && i < SHOWN; i++) {
         fprintf(to, "         dropped on request: %s\n", coupons->tests[fit->dropped[i]].id);
     }

@@ -2,6 +2,7 @@
 #ifndef NW_OUTPUT_JSON_H
 #define NW_OUTPUT_JSON_H
 
+#include "notchwright/material.h"
 #include "notchwright/status.h"
 
 #include <jansson.h>
@@ -21,6 +22,9 @@ json_t *nw_json_text(const char *text);
 
 /* A whole number where it is one. */
 json_t *nw_json_count(double value);
+
+/* A material with all its parameters. */
+json_t *nw_json_material(const nw_material *material);
 
 /* Cautions as [{code, about, text}]. */
 json_t *nw_json_cautions(const nw_cautions *cautions);

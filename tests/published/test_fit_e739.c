@@ -108,6 +108,24 @@ static void by_the_program(void **state)
     test_scratch_remove(&scratch);
 }
 
+/* Dowling, Mechanical Behavior of Materials, 4th ed. 2013, example 9.1 (read): six tests of AISI 4340, for which
+ * regression gives sf' = 1695 MPa and B = -0.0945. */
+static void stress_life_of_4340(void **state)
+{
+    (void)state;
+    static const double stress[] = {948, 834, 703, 631, 579, 524};
+    static const double cycles[] = {222, 992, 6004, 14130, 43860, 132150};
+    double x[6], y[6], limits[2];
+    nw_line line;
+    for (int i = 0; i < 6; i++) {
+        x[i] = log10(stress[i]);
+        y[i] = log10(cycles[i]);
+    }
+    assert_int_equal(nw_line_fit(x, y, NULL, 6, 0.95, &line), NW_OK);
+    assert_near(1.0 / line.b, -0.0945, 0.0, 0.5e-4);
+    assert_near(pow(10.0, nw_line_inverse(&line, -log10(2.0), limits)), 1695.0, 0.0, 0.5);
+}
+
 int main(void)
 {
     const struct CMUnitTest tests[] = {
@@ -117,6 +135,7 @@ int main(void)
         cmocka_unit_test(strain_life_term),
         cmocka_unit_test(inverse_limits),
         cmocka_unit_test(by_the_program),
+        cmocka_unit_test(stress_life_of_4340),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
