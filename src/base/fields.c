@@ -152,6 +152,20 @@ static void read_choice(nw_field_reader *reader, const nw_node *node, const char
     *value = index >= 0 ? index : *value;
 }
 
+/* Control characters and those that turn the direction of text could make a page say what it does not. */
+static void make_printable(char *text)
+{
+    for (unsigned char *p = (unsigned char *)text; *p != '\0'; p++) {
+        bool turns = p[0] == 0xE2 && ((p[1] == 0x80 && p[2] >= 0xAA && p[2] <= 0xAE) ||
+                                      (p[1] == 0x81 && p[2] >= 0xA6 && p[2] <= 0xA9));
+        if (turns) {
+            memset(p, '?', 3);
+        } else if (*p < ' ' || *p == 0x7F) {
+            *p = ' ';
+        }
+    }
+}
+
 static void read_text(nw_field_reader *reader, const nw_node *node, const char *path,
                       const nw_field *row, char *value)
 {
@@ -162,6 +176,7 @@ static void read_text(nw_field_reader *reader, const nw_node *node, const char *
                        strlen(node->scalar), row->size - 1);
     } else {
         nw_text_copy(value, row->size, node->scalar);
+        make_printable(value);
     }
 }
 

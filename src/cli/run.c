@@ -5,6 +5,7 @@
 #include <errno.h>
 #include <stdlib.h>
 #include <string.h>
+#include <sys/stat.h>
 #include <unistd.h>
 
 nw_status nw_cli_write(const nw_arguments *arguments, nw_writer write, const void *data,
@@ -30,6 +31,32 @@ nw_status nw_cli_write(const nw_arguments *arguments, nw_writer write, const voi
                         nw_status_text(status));
     }
     return nw_whole_file_commit(&file, diagnostics);
+}
+
+static bool same_file(const char *a, const char *b)
+{
+    struct stat one, other;
+    if (strcmp(a, b) == 0) { /* perhaps both still to be written */
+        return stat(a, &one) != 0 || S_ISREG(one.st_mode);
+    }
+    return stat(a, &one) == 0 && stat(b, &other) == 0 && S_ISREG(one.st_mode) &&
+           one.st_dev == other.st_dev && one.st_ino == other.st_ino;
+}
+
+nw_status nw_cli_refuse_overwriting(const nw_arguments *arguments, const char *option,
+                                    const char *const *inputs, size_t count,
+                                    nw_diagnostics *diagnostics)
+{
+    const char *output = nw_argument(arguments, option);
+    for (size_t i = 0; output != NULL && i < count; i++) {
+        if (inputs[i] != NULL && same_file(output, inputs[i])) {
+            return nw_fault(diagnostics, NW_USAGE, NULL, NULL,
+                            "%s %.200s: found a file that this command also reads or writes, "
+                            "expected another one",
+                            option, output);
+        }
+    }
+    return NW_OK;
 }
 
 static void print_faults(const nw_diagnostics *diagnostics, nw_status status)

@@ -85,6 +85,11 @@ nw_cli_progress nw_cli_progress_start(void);
 void nw_cli_progress_tell(void *progress, const char *history, uint64_t samples);
 void nw_cli_progress_end(nw_cli_progress *progress);
 
+/* NW_USAGE when an option ("--output", "--save") names the same file as one of the others (NULL entries are passed over): it would be lost. */
+nw_status nw_cli_refuse_overwriting(const nw_arguments *arguments, const char *option,
+                                    const char *const *inputs, size_t count,
+                                    nw_diagnostics *diagnostics);
+
 /* Ends what was printed to standard output: exit status 0, or 5 and a message when it could not be written. */
 int nw_cli_end_of_output(void);
 

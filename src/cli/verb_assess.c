@@ -52,12 +52,27 @@ static nw_status assess(const nw_arguments *arguments, const nw_case *input,
     return status;
 }
 
+static nw_status check_output(const nw_arguments *arguments, const nw_case *input,
+                              nw_diagnostics *diagnostics)
+{
+    const char *own[] = {input->file, input->curve_file};
+    nw_status status = nw_cli_refuse_overwriting(arguments, "--output", own, 2, diagnostics);
+    for (size_t i = 0; i < input->load_count && status == NW_OK; i++) {
+        const char *history = input->loads[i].history;
+        status = nw_cli_refuse_overwriting(arguments, "--output", &history, 1, diagnostics);
+    }
+    return status;
+}
+
 static nw_status run(const nw_arguments *arguments, nw_diagnostics *diagnostics)
 {
     const char *settings[NW_MOST_GIVEN];
     size_t count = nw_argument_all(arguments, "--set", settings, NW_MOST_GIVEN);
     nw_case input;
     nw_status status = nw_case_read(arguments->operands[0], settings, count, &input, diagnostics);
+    if (status == NW_OK) {
+        status = check_output(arguments, &input, diagnostics);
+    }
     if (status == NW_OK) {
         status = assess(arguments, &input, diagnostics);
     }

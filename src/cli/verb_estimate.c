@@ -163,8 +163,12 @@ static nw_status save(const nw_arguments *arguments, const nw_estimate_compariso
     }
     nw_material material;
     nw_whole_file file;
-    nw_status status = nw_estimate_material(method, &result->input, given == NULL ? name : given,
-                                            &material, diagnostics);
+    nw_status status = nw_cli_refuse_overwriting(arguments, "--output", &path, 1, diagnostics);
+    if (status != NW_OK) {
+        return status;
+    }
+    status = nw_estimate_material(method, &result->input, given == NULL ? name : given, &material,
+                                  diagnostics);
     if (status == NW_OK) {
         status = nw_whole_file_open(&file, path, diagnostics);
     }

@@ -309,6 +309,14 @@ static nw_status run(const nw_arguments *arguments, nw_diagnostics *diagnostics)
     if (status != NW_OK) {
         return status;
     }
+    const char *others[] = {arguments->operands[0], nw_argument(arguments, "--save")};
+    status = nw_cli_refuse_overwriting(arguments, "--output", others, 2, diagnostics);
+    if (status == NW_OK) {
+        status = nw_cli_refuse_overwriting(arguments, "--save", others, 1, diagnostics);
+    }
+    if (status != NW_OK) {
+        return status;
+    }
     nw_coupon_options how = {o.youngs_modulus_mpa, decimal};
     nw_coupons coupons;
     status = nw_coupons_read(arguments->operands[0], &how, &coupons, diagnostics);

@@ -1,8 +1,8 @@
 /* CSV, TSV and blank-separated text, streamed: one buffer that always ends in a whole line. */
 #include "base/number.h"
 #include "base/text.h"
+#include "base/text_layout.h"
 #include "history/reader.h"
-#include "history/text_layout.h"
 #include "notchwright/quantity.h"
 
 #include <math.h>
@@ -279,18 +279,20 @@ static bool equals(nw_text_field field, const char *word)
     return length == strlen(word) && memcmp(field.start, word, length) == 0;
 }
 
-static bool column_by_name(text_file *file, const char *line, const char *end, const char *wanted)
+/* How many columns have the name; the first of them becomes the column read. */
+static size_t columns_named(text_file *file, const char *line, const char *end, const char *wanted)
 {
     nw_text_field field;
+    size_t found = 0;
     for (size_t i = 0; nw_text_next_field(&file->layout, &line, end, &field); i++) {
         nw_text_field name = field;
         split_unit(&name);
         if (equals(field, wanted) || equals(name, wanted)) {
-            file->layout.column = i;
-            return true;
+            file->layout.column = found == 0 ? i : file->layout.column;
+            found++;
         }
     }
-    return false;
+    return found;
 }
 
 /* Keeps the unit that the header gives the column. */
@@ -316,7 +318,15 @@ static nw_status choose_column(text_file *file, const nw_input *input, const cha
         return file->layout.columns == 1 ? NW_OK
                                          : column_fault(file, input, line, end, NULL, diagnostics);
     }
-    if (file->layout.has_header && column_by_name(file, line, end, wanted)) {
+    size_t named = file->layout.has_header ? columns_named(file, line, end, wanted) : 0;
+    if (named > 1) {
+        return nw_input_fault(
+            input, file->line, 1, NW_INPUT, diagnostics,
+            "found %zu columns called '%.60s', expected one; give the number of the "
+            "column instead",
+            named, wanted);
+    }
+    if (named == 1) {
         return NW_OK;
     }
     char *rest;
@@ -334,7 +344,7 @@ static bool is_header(text_file *file, const char *line, const char *end, const 
 {
     double number;
     if (wanted != NULL && !nw_number_read(wanted, &number) &&
-        column_by_name(file, line, end, wanted)) {
+        columns_named(file, line, end, wanted) > 0) {
         return true;
     }
     nw_text_field field;

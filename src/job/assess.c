@@ -15,6 +15,7 @@ typedef struct run {
     const nw_assess_options *options;
     nw_diagnostics *diagnostics;
     nw_event *events;
+    uint64_t *first_ids;
     nw_notch_curve *curve;
     nw_life *life;
     nw_tracker *tracker;
@@ -34,6 +35,7 @@ static void free_run(run *r)
         nw_event_clear(&r->events[i]);
     }
     free(r->events);
+    free(r->first_ids);
     free(r->tally.kept);
     nw_tracker_free(r->tracker);
     nw_life_free(r->life);
@@ -42,10 +44,18 @@ static void free_run(run *r)
 
 static nw_status read_events(run *r)
 {
-    r->events = calloc(r->input->load_count, sizeof *r->events);
-    return r->events == NULL ? no_memory(r)
-                             : nw_case_events(r->input, r->options, r->events,
-                                              &r->header_unit_overridden, r->diagnostics);
+    size_t count = r->input->load_count;
+    r->events = calloc(count, sizeof *r->events);
+    r->first_ids = calloc(count, sizeof *r->first_ids);
+    if (r->events == NULL || r->first_ids == NULL) {
+        return no_memory(r);
+    }
+    nw_status status =
+        nw_case_events(r->input, r->options, r->events, &r->header_unit_overridden, r->diagnostics);
+    for (size_t i = 1; i < count; i++) {
+        r->first_ids[i] = r->first_ids[i - 1] + r->events[i - 1].count;
+    }
+    return status;
 }
 
 /* The largest |L| that a branch or the initial curve can reach. */
@@ -117,6 +127,7 @@ static void prepare_tally(run *r)
     nw_tally *tally = &r->tally;
     tally->life = r->life;
     tally->events = r->events;
+    tally->first_ids = r->first_ids;
     tally->event_count = r->input->load_count;
     for (size_t i = 0; i < r->input->load_count; i++) {
         tally->any_gate |= r->events[i].ignore_ranges_below_mpa > 0.0;
@@ -231,6 +242,9 @@ static void fill_damage(const run *r, nw_assessment *result)
     bool open = input->below_endurance == NW_HARMLESS_UNTIL_EXCEEDED;
     result->endurance_exceeded = r->tally.exceeded;
     bool none_counts = open && !r->tally.exceeded;
+    if (none_counts && !r->tally.left_out_exceeded) {
+        result->left_out.damage = 0.0;
+    }
     result->damage_first_block = none_counts ? r->first_damage_above : r->first_damage;
     result->damage_per_block = none_counts ? r->tally.damage_above : r->tally.damage;
     result->life_blocks =
@@ -249,8 +263,8 @@ static void fill_loop(const run *r, const nw_assessment *result, const nw_counte
     to->cycles = rate > 0.0 ? 1.0 / rate : INFINITY;
     to->damage = rate * from->count;
     to->share = harmless ? 0.0 : to->damage / result->damage_per_block;
-    to->start = nw_history_place_of(r->events, r->input->load_count, from->loop.start.id);
-    to->tip = nw_history_place_of(r->events, r->input->load_count, from->loop.tip.id);
+    to->start = nw_history_place_of(&r->tally, from->loop.start.id);
+    to->tip = nw_history_place_of(&r->tally, from->loop.tip.id);
 }
 
 enum { FILL_CHUNK = 1 << 14 };

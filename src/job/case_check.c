@@ -33,7 +33,8 @@ static void check_kinds(nw_field_reader *reader, const nw_node *root, nw_case *r
             "a gauge at the root measures what the notch rule would calculate");
     }
     bool needs_kt = count_kind(result, NW_NOMINAL_STRESS) > 0 || result->plastic_net_section;
-    if (needs_kt && isnan(result->kt)) {
+    bool kt_given = nw_node_entry(nw_node_entry(root, "notch"), "kt") != NULL;
+    if (needs_kt && !kt_given) {
         nw_field_fault(reader, node_for(root, "notch", ""), "notch", "kt",
                        "missing, expected the stress concentration factor that turns nominal into "
                        "notch stress");

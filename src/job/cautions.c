@@ -15,10 +15,12 @@ static void material_cautions(const nw_case *input, nw_cautions *out)
             "from such estimates are commonly off by a factor of 3 to 10.",
             estimate->title, estimate->range);
     } else if (m->basis == NW_ESTIMATED) {
-        nw_caution_add(out, "estimated_material", "life_blocks",
-                       "Life estimated without tests: the material file says its values are "
-                       "estimates (%.200s).",
-                       m->source);
+        nw_caution_add(
+            out, "estimated_material", "life_blocks",
+            "Life estimated without tests: the material file says its values are "
+            "estimates (%.200s). Lives from such estimates are commonly off by a factor of 3 "
+            "to 10.",
+            m->source);
     }
     if (m->basis == NW_BASIS_UNSTATED) {
         nw_caution_add(out, "basis_unstated", "life_blocks",
@@ -102,13 +104,6 @@ static void load_cautions(const nw_case *input, const nw_assess_evidence *eviden
         nw_caution_add(out, "large_strain", "extremes",
                        "Local strain exceeds 5 %%: small-strain notch rules are formal there.");
     }
-    if (result->left_out.loops > 0.0) {
-        nw_caution_add(
-            out, "small_ranges_left_out", "damage_per_block",
-            "%.0f closed loop(s) a block were left out (ignore_ranges_below); they would have "
-            "done %.3g damage a block beside the %.3g counted.",
-            result->left_out.loops, result->left_out.damage, result->damage_per_block);
-    }
 }
 
 static double strain_of(const nw_loop_result *loop)
@@ -157,6 +152,16 @@ static void range_cautions(const nw_case *input, const nw_assess_evidence *evide
             "(%.3g to %.3g cycles): extrapolated.",
             100.0 * beside_life, m->valid_cycles[0], m->valid_cycles[1]);
     }
+    const double usual_tests[2] = {0.0, 1e7};
+    double beyond = isnan(m->valid_cycles[1]) ? share_outside(result, cycles_of, usual_tests) : 0.0;
+    if (beyond > share_worth_saying) {
+        nw_caution_add(
+            out, "long_life_extrapolated", "life_blocks",
+            "%.0f %% of the damage comes from loops with lives above 1e7 cycles. The material "
+            "does not say how far its tests reach; coupon tests seldom reach that far, so this "
+            "life is extrapolated.",
+            100.0 * beyond);
+    }
     if (evidence->rate_max > 2.0) {
         nw_caution_add(
             out, "life_below_one_reversal", "life_blocks",
@@ -182,9 +187,27 @@ static void range_cautions(const nw_case *input, const nw_assess_evidence *evide
     }
 }
 
+/* What the life would be with the loops that were left out on request. */
+static void left_out_caution(const nw_case *input, nw_assessment *result)
+{
+    if (result->left_out.loops == 0.0) {
+        return;
+    }
+    double with_them = input->damage_sum / (result->damage_per_block + result->left_out.damage);
+    bool misses = result->target_reached && with_them < input->target_blocks;
+    nw_caution_add(
+        &result->cautions, "small_ranges_left_out", "life_blocks",
+        "%.0f closed loop%s a block %s left out (ignore_ranges_below), with damage %.3g a "
+        "block beside the %.3g counted. Counted, life is about %.2g blocks%s.",
+        result->left_out.loops, result->left_out.loops == 1.0 ? "" : "s",
+        result->left_out.loops == 1.0 ? "was" : "were", result->left_out.damage,
+        result->damage_per_block, with_them, misses ? ": the target is then MISSED" : "");
+}
+
 static void life_cautions(const nw_case *input, nw_assessment *result)
 {
     nw_cautions *out = &result->cautions;
+    left_out_caution(input, result);
     if (input->walker_gamma_estimated) {
         bool steel = input->material.group == NW_STEEL || input->material.group == NW_CAST_STEEL;
         nw_caution_add(out, "walker_gamma_estimated", "life_blocks",

@@ -9,23 +9,26 @@ enum { BATCH = 256 };
 /* Damages closer than this (relative) may be of equal loops. */
 static const double same_damage = 1e-9;
 
-nw_history_place nw_history_place_of(const nw_event *events, size_t count, uint64_t id)
+nw_history_place nw_history_place_of(const nw_tally *tally, uint64_t id)
 {
     nw_history_place place = {0, 0};
-    for (size_t i = 0; i < count; i++) {
-        if (id < events[i].count) {
-            place.event = i;
-            place.sample = events[i].points[id].sample;
-            return place;
-        }
-        id -= events[i].count;
+    size_t low = 0, high = tally->event_count;
+    while (high - low > 1) {
+        size_t middle = (low + high) / 2;
+        *(tally->first_ids[middle] <= id ? &low : &high) = middle;
+    }
+    const nw_event *event = &tally->events[low];
+    uint64_t point = id - tally->first_ids[low];
+    if (point < event->count) {
+        place.event = low;
+        place.sample = event->points[point].sample;
     }
     return place;
 }
 
 static double gate_of(const nw_tally *tally, uint64_t id)
 {
-    nw_history_place place = nw_history_place_of(tally->events, tally->event_count, id);
+    nw_history_place place = nw_history_place_of(tally, id);
     return tally->events[place.event].ignore_ranges_below_mpa;
 }
 
@@ -44,6 +47,8 @@ static size_t leave_out(nw_tally *tally, nw_loop *loops, double *rates, size_t c
         if (is_left_out(tally, &loops[i])) {
             tally->left_out.loops += weight;
             tally->left_out.damage += weight * rates[i];
+            tally->left_out_exceeded |=
+                0.5 * fabs(loops[i].start.strain - loops[i].tip.strain) >= tally->endurance;
         } else {
             loops[stay] = loops[i];
             rates[stay++] = rates[i];

@@ -16,6 +16,7 @@ typedef struct nw_counted_loop {
 typedef struct nw_tally {
     const nw_life *life;
     const nw_event *events;
+    const uint64_t *first_ids; /* [event_count] id of each event's first turning point */
     size_t event_count;
     bool any_gate;    /* some event leaves small ranges out */
     double endurance; /* strain amplitude; NAN when it plays no part */
@@ -25,6 +26,7 @@ typedef struct nw_tally {
     double loops;
     bool exceeded;
     nw_left_out left_out;
+    bool left_out_exceeded; /* one of them is at or above the endurance amplitude */
     double stress_mean_max_mpa, rate_max;
 
     /* Damages of the most damaging single loops, falling: [top_most] while `finds_top`. */
@@ -54,6 +56,6 @@ void nw_tally_restart(nw_tally *tally);
 nw_status nw_counted_loops_rank(nw_counted_loop *loops, size_t *count, size_t wanted);
 
 /* Event and sample of a turning point's id. */
-nw_history_place nw_history_place_of(const nw_event *events, size_t count, uint64_t id);
+nw_history_place nw_history_place_of(const nw_tally *tally, uint64_t id);
 
 #endif

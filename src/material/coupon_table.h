@@ -2,7 +2,7 @@
 #ifndef NW_MATERIAL_COUPON_TABLE_H
 #define NW_MATERIAL_COUPON_TABLE_H
 
-#include "history/text_layout.h"
+#include "base/text_layout.h"
 #include "notchwright/fit.h"
 
 typedef enum nw_coupon_kind {

@@ -94,6 +94,14 @@ static void check_set(const nw_material *m, nw_field_reader *reader, const nw_no
                        "ultimate strength (%g MPa)",
                        m->fracture_stress_mpa, m->ultimate_strength_mpa);
     }
+    if (known(m->ultimate_strength_mpa) &&
+        m->ultimate_strength_mpa < 1e-4 * m->youngs_modulus_mpa) {
+        nw_field_fault(
+            reader, map, path, "ultimate_strength",
+            "found %g MPa, expected above a ten-thousandth of Young's modulus (%g MPa); check "
+            "the units",
+            m->ultimate_strength_mpa, m->youngs_modulus_mpa);
+    }
     if (known(m->ultimate_strength_mpa) && m->ultimate_strength_mpa > 0.1 * m->youngs_modulus_mpa) {
         nw_field_fault(reader, map, path, "ultimate_strength",
                        "found %g MPa, expected below a tenth of Young's modulus (%g MPa); check "

@@ -5,6 +5,7 @@
 
 #include <inttypes.h>
 #include <math.h>
+#include <stdlib.h>
 #include <string.h>
 
 enum { LINE = 400, NUMBER = 40 };
@@ -39,10 +40,30 @@ static void cautions_about(FILE *to, const nw_assessment *result, const char *ab
     }
 }
 
+/* Digits at which the rounded life lies on the side of the target that the life itself does: "missed" beside two
+ * equal numbers would be no help. */
+static int verdict_digits(const nw_case *input, const nw_assessment *result)
+{
+    int digits = life_digits(input);
+    char text[NUMBER];
+    for (; result->has_target && digits < 9; digits++) {
+        double rounded =
+            strtod(nw_page_rounded(result->life_blocks, digits, text, sizeof text), NULL);
+        double ratio = strtod(
+            nw_page_rounded(result->life_blocks / input->target_blocks, digits, text, sizeof text),
+            NULL);
+        if ((rounded >= input->target_blocks) == result->target_reached &&
+            (ratio >= 1.0) == result->target_reached) {
+            break;
+        }
+    }
+    return digits;
+}
+
 static void write_verdict(FILE *to, const nw_case *input, const nw_assessment *result, bool colour)
 {
     char life[NUMBER], ratio[NUMBER], line[LINE];
-    int digits = life_digits(input);
+    int digits = isinf(result->life_blocks) ? life_digits(input) : verdict_digits(input, result);
     nw_text_builder out = nw_text_builder_on(line, sizeof line);
     if (isinf(result->life_blocks)) {
         nw_text_add(&out, "no damage by this method");
@@ -67,16 +88,21 @@ static void write_verdict(FILE *to, const nw_case *input, const nw_assessment *r
     fputc('\n', to);
 }
 
+static bool is_gauge(const nw_case *input)
+{
+    return input->loads[0].kind == NW_NOTCH_STRAIN;
+}
+
 static void write_basis(FILE *to, const nw_case *input, const nw_assessment *result)
 {
     char line[LINE];
-    snprintf(
-        line, sizeof line,
-        "rule %s; mean stress %s; material %s, %s; %g %% survival%s; failure at damage sum %g.",
-        result->rule->title, input->correction->title,
-        input->material.name[0] == '\0' ? "inline" : input->material.name, basis_words(input),
-        100.0 * input->survival, input->survival == 0.5 ? " (median curve)" : "",
-        input->damage_sum);
+    snprintf(line, sizeof line,
+             "%s%s; mean stress %s; material %s, %s; %g %% survival%s; failure at damage sum %g.",
+             is_gauge(input) ? "strain measured at the root" : "rule ",
+             is_gauge(input) ? "" : result->rule->title, input->correction->title,
+             input->material.name[0] == '\0' ? "inline" : input->material.name, basis_words(input),
+             100.0 * input->survival, input->survival == 0.5 ? " (median curve)" : "",
+             input->damage_sum);
     nw_page_paragraph(to, "  by ", line);
 }
 
@@ -147,6 +173,10 @@ static void write_loop(FILE *to, const nw_case *input, const nw_loop_result *loo
 static void write_loops(FILE *to, const nw_case *input, const nw_assessment *result)
 {
     size_t shown = result->loop_count < 10 ? result->loop_count : 10;
+    if (shown == 0) {
+        fputs("\nNo closed loop is left in the repeating block\n", to);
+        return;
+    }
     if (shown == 1) {
         fputs("\nThe loop of the repeating block\n", to);
     } else {
@@ -180,8 +210,12 @@ nw_status nw_write_assessment_text(FILE *to, const nw_case *input, const nw_asse
     write_material(to, input, result);
     write_loops(to, input, result);
     fprintf(to, "\nMethods\n");
-    nw_page_paragraph(to, "  notch rule: ", result->rule->equation);
-    nw_page_paragraph(to, "    ", result->rule->reference);
+    if (is_gauge(input)) {
+        nw_page_paragraph(to, "  notch rule: ", "none, strain was measured at the root");
+    } else {
+        nw_page_paragraph(to, "  notch rule: ", result->rule->equation);
+        nw_page_paragraph(to, "    ", result->rule->reference);
+    }
     nw_page_paragraph(to, "  mean stress: ", input->correction->equation);
     nw_page_paragraph(to, "    ", input->correction->reference);
     nw_page_paragraph(

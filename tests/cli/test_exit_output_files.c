@@ -149,6 +149,63 @@ static void closed_standard_output_is_told(void **state)
     test_result_free(&result);
 }
 
+/* What a command reads it must not overwrite, whatever the name it goes by. */
+static void inputs_are_not_overwritten(void **state)
+{
+    const bench *b = *state;
+    const char *const names[] = {"case.yaml", "./case.yaml", "link.yaml"};
+    for (int i = 0; i < 3; i++) {
+        test_result result = test_shell(
+            "cd '%s' && ln -sf case.yaml link.yaml && \"$NW\" assess case.yaml --output %s",
+            b->scratch.path, names[i]);
+        assert_int_equal(result.status, 2);
+        assert_non_null(strstr(result.err, "also reads or writes"));
+        test_result_free(&result);
+    }
+    char *content = test_read_file(b->path);
+    assert_string_equal(content, bad_input_base);
+    free(content);
+    test_result saved =
+        test_shell("cd '%s' && \"$NW\" estimate --modulus '206 GPa' --ultimate '820 MPa' "
+                   "--group steel --save s.yaml --output s.yaml",
+                   b->scratch.path);
+    assert_int_equal(saved.status, 2);
+    test_result_free(&saved);
+}
+
+/* Loops thrown away on request must not turn a missed target into a silent success. */
+static void left_out_loops_stand_beside_the_verdict(void **state)
+{
+    const bench *b = *state;
+    const char *path = test_scratch_text(
+        &b->scratch, "gate.yaml",
+        "notchwright: 1\nmaterial: rqc-100\nnotch: {kt: 2.5}\nload:\n"
+        "  - {history: [0, 200, -100, 0], scale: 1 MPa, ignore_ranges_below: 5000 MPa}\n"
+        "life: {target: 1e9}\n");
+    test_result result = test_shell("\"$NW\" assess '%s'", path);
+    const char *caution = strstr(result.out, "left out");
+    assert_non_null(caution);
+    assert_non_null(strstr(result.out, "MISSED"));
+    assert_true(caution < strstr(result.out, "\nDamage"));
+    test_result_free(&result);
+}
+
+/* Near the target the numbers shown must lie on the side of the verdict. */
+static void rounding_does_not_contradict_the_verdict(void **state)
+{
+    const bench *b = *state;
+    test_result exact =
+        test_shell("\"$NW\" assess '%s' --format json | grep '\"life_blocks\"'", b->path);
+    double life = strtod(strchr(exact.out, ':') + 1, NULL);
+    test_result_free(&exact);
+    test_result missed =
+        test_shell("\"$NW\" assess '%s' --set life.target=%.8g", b->path, life * 1.001);
+    const char *about = strstr(missed.out, "TARGET MISSED  about ");
+    assert_non_null(about);
+    assert_true(strtod(about + 21, NULL) < life * 1.001);
+    test_result_free(&missed);
+}
+
 int main(void)
 {
     const struct CMUnitTest tests[] = {
@@ -160,6 +217,10 @@ int main(void)
         cmocka_unit_test(full_device_is_told_by_help),
         cmocka_unit_test_setup_teardown(closed_pipe_is_told, set_up, tear_down),
         cmocka_unit_test_setup_teardown(closed_standard_output_is_told, set_up, tear_down),
+        cmocka_unit_test_setup_teardown(inputs_are_not_overwritten, set_up, tear_down),
+        cmocka_unit_test_setup_teardown(left_out_loops_stand_beside_the_verdict, set_up, tear_down),
+        cmocka_unit_test_setup_teardown(rounding_does_not_contradict_the_verdict, set_up,
+                                        tear_down),
     };
     return cmocka_run_group_tests_name("exit_output_files", tests, NULL, NULL);
 }

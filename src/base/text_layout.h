@@ -1,6 +1,6 @@
 /* The layout of a text table: delimiter, header, number of columns, and how to find a field in a line. */
-#ifndef NW_HISTORY_TEXT_LAYOUT_H
-#define NW_HISTORY_TEXT_LAYOUT_H
+#ifndef NW_BASE_TEXT_LAYOUT_H
+#define NW_BASE_TEXT_LAYOUT_H
 
 #include <stdbool.h>
 #include <stddef.h>

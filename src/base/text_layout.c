@@ -1,4 +1,4 @@
-#include "history/text_layout.h"
+#include "base/text_layout.h"
 
 #include <ctype.h>
 #include <string.h>
