@@ -7,29 +7,6 @@
 #include <sys/wait.h>
 #include <unistd.h>
 
-/* The base case in a scratch folder of its own. */
-typedef struct bench {
-    test_scratch scratch;
-    char path[512];
-} bench;
-
-static int set_up(void **state)
-{
-    bench *b = malloc(sizeof *b);
-    b->scratch = test_scratch_create();
-    strcpy(b->path, test_scratch_text(&b->scratch, "case.yaml", bad_input_base));
-    *state = b;
-    return 0;
-}
-
-static int tear_down(void **state)
-{
-    bench *b = *state;
-    test_scratch_remove(&b->scratch);
-    free(b);
-    return 0;
-}
-
 static void expect(const bench *b, int status, const char *arguments)
 {
     test_result result =
@@ -180,12 +157,14 @@ static void colour_on_a_terminal_unless_refused(void **state)
 int main(void)
 {
     const struct CMUnitTest tests[] = {
-        cmocka_unit_test_setup_teardown(statuses, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(results_and_diagnostics_are_kept_apart, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(quiet_prints_errors_alone, set_up, tear_down),
+        cmocka_unit_test_setup_teardown(statuses, bench_set_up, bench_tear_down),
+        cmocka_unit_test_setup_teardown(results_and_diagnostics_are_kept_apart, bench_set_up,
+                                        bench_tear_down),
+        cmocka_unit_test_setup_teardown(quiet_prints_errors_alone, bench_set_up, bench_tear_down),
         cmocka_unit_test(help_and_version),
         cmocka_unit_test(example_of_the_help_runs),
-        cmocka_unit_test_setup_teardown(colour_on_a_terminal_unless_refused, set_up, tear_down),
+        cmocka_unit_test_setup_teardown(colour_on_a_terminal_unless_refused, bench_set_up,
+                                        bench_tear_down),
     };
     return cmocka_run_group_tests_name("exit_and_output", tests, NULL, NULL);
 }

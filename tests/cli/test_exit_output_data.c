@@ -3,28 +3,6 @@
 
 #include <jansson.h>
 
-typedef struct bench {
-    test_scratch scratch;
-    char path[512];
-} bench;
-
-static int set_up(void **state)
-{
-    bench *b = malloc(sizeof *b);
-    b->scratch = test_scratch_create();
-    strcpy(b->path, test_scratch_text(&b->scratch, "case.yaml", bad_input_base));
-    *state = b;
-    return 0;
-}
-
-static int tear_down(void **state)
-{
-    bench *b = *state;
-    test_scratch_remove(&b->scratch);
-    free(b);
-    return 0;
-}
-
 static json_t *parsed(const char *text)
 {
     json_error_t error;
@@ -254,10 +232,10 @@ static void no_target_is_null(void **state)
 int main(void)
 {
     const struct CMUnitTest tests[] = {
-        cmocka_unit_test_setup_teardown(every_key_of_the_contract, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(case_values_come_back, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(endless_life_is_null, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(no_target_is_null, set_up, tear_down),
+        cmocka_unit_test_setup_teardown(every_key_of_the_contract, bench_set_up, bench_tear_down),
+        cmocka_unit_test_setup_teardown(case_values_come_back, bench_set_up, bench_tear_down),
+        cmocka_unit_test_setup_teardown(endless_life_is_null, bench_set_up, bench_tear_down),
+        cmocka_unit_test_setup_teardown(no_target_is_null, bench_set_up, bench_tear_down),
     };
     return cmocka_run_group_tests_name("exit_output_data", tests, NULL, NULL);
 }

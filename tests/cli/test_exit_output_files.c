@@ -5,29 +5,6 @@
 
 #define EXAMPLE TEST_SOURCE_DIR "/examples/forwarder-axle/case.yaml"
 
-/* The base case in a scratch folder of its own. */
-typedef struct bench {
-    test_scratch scratch;
-    char path[512];
-} bench;
-
-static int set_up(void **state)
-{
-    bench *b = malloc(sizeof *b);
-    b->scratch = test_scratch_create();
-    strcpy(b->path, test_scratch_text(&b->scratch, "case.yaml", bad_input_base));
-    *state = b;
-    return 0;
-}
-
-static int tear_down(void **state)
-{
-    bench *b = *state;
-    test_scratch_remove(&b->scratch);
-    free(b);
-    return 0;
-}
-
 /* Fails unless the scratch folder holds just these files ("case.yaml" and others, sorted). */
 static void assert_files(const bench *b, const char *names)
 {
@@ -209,18 +186,22 @@ static void rounding_does_not_contradict_the_verdict(void **state)
 int main(void)
 {
     const struct CMUnitTest tests[] = {
-        cmocka_unit_test_setup_teardown(output_file_holds_what_standard_output_would, set_up,
-                                        tear_down),
-        cmocka_unit_test_setup_teardown(failed_run_leaves_the_output_file, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(full_disk_leaves_the_output_file, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(full_device_is_told, set_up, tear_down),
+        cmocka_unit_test_setup_teardown(output_file_holds_what_standard_output_would, bench_set_up,
+                                        bench_tear_down),
+        cmocka_unit_test_setup_teardown(failed_run_leaves_the_output_file, bench_set_up,
+                                        bench_tear_down),
+        cmocka_unit_test_setup_teardown(full_disk_leaves_the_output_file, bench_set_up,
+                                        bench_tear_down),
+        cmocka_unit_test_setup_teardown(full_device_is_told, bench_set_up, bench_tear_down),
         cmocka_unit_test(full_device_is_told_by_help),
-        cmocka_unit_test_setup_teardown(closed_pipe_is_told, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(closed_standard_output_is_told, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(inputs_are_not_overwritten, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(left_out_loops_stand_beside_the_verdict, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(rounding_does_not_contradict_the_verdict, set_up,
-                                        tear_down),
+        cmocka_unit_test_setup_teardown(closed_pipe_is_told, bench_set_up, bench_tear_down),
+        cmocka_unit_test_setup_teardown(closed_standard_output_is_told, bench_set_up,
+                                        bench_tear_down),
+        cmocka_unit_test_setup_teardown(inputs_are_not_overwritten, bench_set_up, bench_tear_down),
+        cmocka_unit_test_setup_teardown(left_out_loops_stand_beside_the_verdict, bench_set_up,
+                                        bench_tear_down),
+        cmocka_unit_test_setup_teardown(rounding_does_not_contradict_the_verdict, bench_set_up,
+                                        bench_tear_down),
     };
     return cmocka_run_group_tests_name("exit_output_files", tests, NULL, NULL);
 }

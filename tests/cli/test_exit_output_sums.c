@@ -3,11 +3,6 @@
 
 #include <jansson.h>
 
-typedef struct bench {
-    test_scratch scratch;
-    char path[512];
-} bench;
-
 enum { VALUES = 400 };
 
 /* The base case over an irregular inline history. */
@@ -27,14 +22,6 @@ static int set_up(void **state)
     strcpy(b->path, test_scratch_text(&b->scratch, "case.yaml", text));
     free(text);
     *state = b;
-    return 0;
-}
-
-static int tear_down(void **state)
-{
-    bench *b = *state;
-    test_scratch_remove(&b->scratch);
-    free(b);
     return 0;
 }
 
@@ -237,11 +224,13 @@ static void set_equals_editing(void **state)
 int main(void)
 {
     const struct CMUnitTest tests[] = {
-        cmocka_unit_test_setup_teardown(loops_add_up, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(life_follows_from_the_damages, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(csv_rows_are_the_loops_of_the_json, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(csv_leaves_out_what_does_not_exist, set_up, tear_down),
-        cmocka_unit_test_setup_teardown(set_equals_editing, set_up, tear_down),
+        cmocka_unit_test_setup_teardown(loops_add_up, set_up, bench_tear_down),
+        cmocka_unit_test_setup_teardown(life_follows_from_the_damages, set_up, bench_tear_down),
+        cmocka_unit_test_setup_teardown(csv_rows_are_the_loops_of_the_json, set_up,
+                                        bench_tear_down),
+        cmocka_unit_test_setup_teardown(csv_leaves_out_what_does_not_exist, set_up,
+                                        bench_tear_down),
+        cmocka_unit_test_setup_teardown(set_equals_editing, set_up, bench_tear_down),
     };
     return cmocka_run_group_tests_name("exit_output_sums", tests, NULL, NULL);
 }

@@ -149,3 +149,20 @@ void bad_input_base_is_good(void **state)
     test_result_free(&result);
     test_scratch_remove(&scratch);
 }
+
+int bench_set_up(void **state)
+{
+    bench *b = malloc(sizeof *b);
+    b->scratch = test_scratch_create();
+    strcpy(b->path, test_scratch_text(&b->scratch, "case.yaml", bad_input_base));
+    *state = b;
+    return 0;
+}
+
+int bench_tear_down(void **state)
+{
+    bench *b = *state;
+    test_scratch_remove(&b->scratch);
+    free(b);
+    return 0;
+}

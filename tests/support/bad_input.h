@@ -35,4 +35,12 @@ void bad_input_base_is_good(void **state);
 /* A copy of `text` with the only occurrence of `from` replaced; free it. */
 char *bad_input_replace(const char *text, const char *from, const char *to);
 
+/* The base case in a scratch folder of its own: a cmocka fixture, *state being a bench. */
+typedef struct bench {
+    test_scratch scratch;
+    char path[512];
+} bench;
+int bench_set_up(void **state);
+int bench_tear_down(void **state);
+
 #endif
