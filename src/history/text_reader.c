@@ -1,9 +1,7 @@
 /* CSV, TSV and blank-separated text, streamed: one buffer that always ends in a whole line. */
 #include "base/number.h"
 #include "base/text.h"
-#include "base/text_layout.h"
-#include "history/reader.h"
-#include "notchwright/quantity.h"
+#include "history/text_file.h"
 
 #include <math.h>
 #include <stdlib.h>
@@ -11,18 +9,6 @@
 #if defined(__SSE2__)
 #include <emmintrin.h>
 #endif
-
-enum { BUFFER_BYTES = 1 << 18 };
-
-typedef struct text_file {
-    nw_text_layout layout;
-    char *buffer;    /* BUFFER_BYTES + 1 for a missing last line end + padding */
-    char *at;        /* next line */
-    char *lines_end; /* end of the last whole line */
-    char *end;       /* end of the bytes read */
-    bool source_ended;
-    size_t line; /* number of the line at `at`, from 1 */
-} text_file;
 
 static bool recognises(const char *head, size_t count)
 {
@@ -33,13 +19,12 @@ static bool recognises(const char *head, size_t count)
 
 static void text_close(void *state)
 {
-    text_file *file = state;
+    nw_text_file *file = state;
     free(file->buffer);
     free(file);
 }
 
-/* Moves the unfinished line to the front and reads on until there is a whole line. */
-static nw_status fill(text_file *file, nw_input *input, nw_diagnostics *diagnostics)
+nw_status nw_text_fill(nw_text_file *file, nw_input *input, nw_diagnostics *diagnostics)
 {
     size_t kept = (size_t)(file->end - file->at);
     memmove(file->buffer, file->at, kept);
@@ -48,18 +33,19 @@ static nw_status fill(text_file *file, nw_input *input, nw_diagnostics *diagnost
     if (file->source_ended) {
         return NW_OK;
     }
-    if (kept == BUFFER_BYTES) {
+    if (kept == NW_TEXT_BUFFER_BYTES) {
         return nw_input_fault(input, file->line, 1, NW_INPUT, diagnostics,
                               "found a line of more than %d bytes, expected lines of text",
-                              BUFFER_BYTES);
+                              NW_TEXT_BUFFER_BYTES);
     }
     size_t got;
-    nw_status status = nw_input_read(input, file->end, BUFFER_BYTES - kept, &got, diagnostics);
+    nw_status status =
+        nw_input_read(input, file->end, NW_TEXT_BUFFER_BYTES - kept, &got, diagnostics);
     if (status != NW_OK) {
         return status;
     }
     file->end += got;
-    if (file->end < file->buffer + BUFFER_BYTES) {
+    if (file->end < file->buffer + NW_TEXT_BUFFER_BYTES) {
         file->source_ended = true;
         if (file->end > file->buffer && file->end[-1] != '\n') {
             *file->end++ = '\n';
@@ -72,17 +58,17 @@ static nw_status fill(text_file *file, nw_input *input, nw_diagnostics *diagnost
     }
     file->lines_end = last;
     if (last == file->buffer && !file->source_ended) {
-        return fill(file, input, diagnostics);
+        return nw_text_fill(file, input, diagnostics);
     }
     return NW_OK;
 }
 
-static size_t column_of(const text_file *file, const char *p)
+static size_t column_of(const nw_text_file *file, const char *p)
 {
     return (size_t)(p - file->at) + 1;
 }
 
-static nw_status field_fault(const text_file *file, const nw_input *input, nw_text_field field,
+static nw_status field_fault(const nw_text_file *file, const nw_input *input, nw_text_field field,
                              nw_diagnostics *diagnostics)
 {
     char shown[41];
@@ -104,7 +90,7 @@ static nw_status field_fault(const text_file *file, const nw_input *input, nw_te
 }
 
 /* One line in full generality. *taken tells whether it held a sample. */
-static nw_status read_line(text_file *file, const nw_input *input, const char *line_end,
+static nw_status read_line(nw_text_file *file, const nw_input *input, const char *line_end,
                            double *value, bool *taken, nw_diagnostics *diagnostics)
 {
     *taken = false;
@@ -151,7 +137,7 @@ static size_t short_line_length(const char *p)
 }
 
 /* Lines of one plain number each, the usual logger's file; stops at the first line that is not. */
-static size_t read_plain_lines(text_file *file, double *values, size_t capacity)
+static size_t read_plain_lines(nw_text_file *file, double *values, size_t capacity)
 {
     const char *p = file->at, *end = file->lines_end;
     char decimal = file->layout.decimal;
@@ -174,14 +160,14 @@ static size_t read_plain_lines(text_file *file, double *values, size_t capacity)
 static nw_status text_read(void *state, nw_input *input, double *values, size_t capacity,
                            size_t *count, nw_diagnostics *diagnostics)
 {
-    text_file *file = state;
+    nw_text_file *file = state;
     *count = 0;
     while (*count < capacity) {
         if (file->at == file->lines_end) {
             if (*count > 0) {
                 return NW_OK;
             }
-            nw_status status = fill(file, input, diagnostics);
+            nw_status status = nw_text_fill(file, input, diagnostics);
             if (status != NW_OK || file->at == file->lines_end) {
                 return status;
             }
@@ -205,24 +191,7 @@ static nw_status text_read(void *state, nw_input *input, double *values, size_t 
     return NW_OK;
 }
 
-/* ---- the layout, told from the first lines ---- */
-
-/* Moves `file` to the next line with content; false when there is none in the buffer. */
-static bool seek_content(text_file *file, const char **line_end)
-{
-    while (file->at < file->lines_end) {
-        char *end = memchr(file->at, '\n', (size_t)(file->lines_end - file->at));
-        if (nw_text_content_end(file->at, end) > file->at) {
-            *line_end = end;
-            return true;
-        }
-        file->at = end + 1;
-        file->line++;
-    }
-    return false;
-}
-
-static nw_status refuse_encoding(const text_file *file, const nw_input *input,
+static nw_status refuse_encoding(const nw_text_file *file, const nw_input *input,
                                  nw_diagnostics *diagnostics)
 {
     const unsigned char *b = (const unsigned char *)file->at;
@@ -240,245 +209,31 @@ static nw_status refuse_encoding(const text_file *file, const nw_input *input,
     return NW_OK;
 }
 
-static nw_status column_fault(const text_file *file, const nw_input *input, const char *line,
-                              const char *end, const char *wanted, nw_diagnostics *diagnostics)
-{
-    char names[300];
-    nw_text_builder out = nw_text_builder_on(names, sizeof names);
-    nw_text_field field;
-    for (size_t i = 0; nw_text_next_field(&file->layout, &line, end, &field); i++) {
-        nw_text_add(&out, "%s%zu", i == 0 ? "" : ", ", i + 1);
-        if (file->layout.has_header) {
-            nw_text_add(&out, " '%.*s'", (int)(field.end - field.start), field.start);
-        }
-    }
-    return nw_input_fault(input, file->line, 1, NW_INPUT, diagnostics,
-                          "found %s%.60s%s, expected 'column' to be one of: %s",
-                          wanted == NULL ? "several columns and no choice" : "no column '",
-                          wanted == NULL ? "" : wanted, wanted == NULL ? "" : "'", names);
-}
-
-/* Splits "name[unit]" or "name [unit]"; the unit is empty where there is none. */
-static nw_text_field split_unit(nw_text_field *name)
-{
-    nw_text_field unit = {name->end, name->end};
-    const char *open = memchr(name->start, '[', (size_t)(name->end - name->start));
-    if (open != NULL && open > name->start && name->end[-1] == ']') {
-        unit = (nw_text_field){open + 1, name->end - 1};
-        name->end = open;
-        while (name->end > name->start && name->end[-1] == ' ') {
-            name->end--;
-        }
-    }
-    return unit;
-}
-
-static bool equals(nw_text_field field, const char *word)
-{
-    size_t length = (size_t)(field.end - field.start);
-    return length == strlen(word) && memcmp(field.start, word, length) == 0;
-}
-
-/* How many columns have the name; the first of them becomes the column read. */
-static size_t columns_named(text_file *file, const char *line, const char *end, const char *wanted)
-{
-    nw_text_field field;
-    size_t found = 0;
-    for (size_t i = 0; nw_text_next_field(&file->layout, &line, end, &field); i++) {
-        nw_text_field name = field;
-        split_unit(&name);
-        if (equals(field, wanted) || equals(name, wanted)) {
-            file->layout.column = found == 0 ? i : file->layout.column;
-            found++;
-        }
-    }
-    return found;
-}
-
-/* Keeps the unit that the header gives the column. */
-static void note_unit(const text_file *file, nw_input *input, const char *line, const char *end)
-{
-    nw_text_field field = {line, line};
-    for (size_t i = 0; i <= file->layout.column; i++) {
-        nw_text_next_field(&file->layout, &line, end, &field);
-    }
-    nw_text_field unit = split_unit(&field);
-    size_t length = (size_t)(unit.end - unit.start);
-    if (length < sizeof input->unit) {
-        memcpy(input->unit, unit.start, length);
-        input->unit[length] = '\0';
-    }
-}
-
-/* The header's name comes first, so that a column called "2" can be meant by its name. */
-static nw_status choose_column(text_file *file, const nw_input *input, const char *line,
-                               const char *end, const char *wanted, nw_diagnostics *diagnostics)
-{
-    if (wanted == NULL) {
-        return file->layout.columns == 1 ? NW_OK
-                                         : column_fault(file, input, line, end, NULL, diagnostics);
-    }
-    size_t named = file->layout.has_header ? columns_named(file, line, end, wanted) : 0;
-    if (named > 1) {
-        return nw_input_fault(
-            input, file->line, 1, NW_INPUT, diagnostics,
-            "found %zu columns called '%.60s', expected one; give the number of the "
-            "column instead",
-            named, wanted);
-    }
-    if (named == 1) {
-        return NW_OK;
-    }
-    char *rest;
-    unsigned long number = strtoul(wanted, &rest, 10);
-    if (*wanted == '\0' || *rest != '\0' || number < 1 || number > file->layout.columns) {
-        return column_fault(file, input, line, end, wanted, diagnostics);
-    }
-    file->layout.column = number - 1;
-    return NW_OK;
-}
-
-/* A first line without a single number is a header, and so is one that names the column asked for; else it is
- * data. */
-static bool is_header(text_file *file, const char *line, const char *end, const char *wanted)
-{
-    double number;
-    if (wanted != NULL && !nw_number_read(wanted, &number) &&
-        columns_named(file, line, end, wanted) > 0) {
-        return true;
-    }
-    nw_text_field field;
-    while (nw_text_next_field(&file->layout, &line, end, &field)) {
-        if (nw_text_looks_numeric(field)) {
-            return false;
-        }
-    }
-    return true;
-}
-
-/* Moves to the next line with content, reading on as far as needed: comments may be long. */
-static nw_status find_content(text_file *file, nw_input *input, const char **line_end,
-                              const char *found_at_end, nw_diagnostics *diagnostics)
-{
-    *line_end = NULL;
-    while (!seek_content(file, line_end)) {
-        if (file->source_ended) {
-            return nw_input_fault(input, file->line, 1, NW_INPUT, diagnostics, "%s", found_at_end);
-        }
-        nw_status status = fill(file, input, diagnostics);
-        if (status != NW_OK) {
-            return status;
-        }
-    }
-    /* With the first line at the front, the second one is in the buffer too. */
-    if (file->at > file->buffer && !file->source_ended) {
-        nw_status status = fill(file, input, diagnostics);
-        *line_end = memchr(file->at, '\n', (size_t)(file->lines_end - file->at));
-        return status;
-    }
-    return NW_OK;
-}
-
-static void set_columns(text_file *file, const char *line, const char *end)
-{
-    file->layout.delimiter = nw_text_delimiter_of(line, end, file->layout.decimal);
-    file->layout.columns = nw_text_count_fields(&file->layout, line, end);
-}
-
-/* The header, which stands in a copy of its own, against the first row of data at `file`. */
-static nw_status use_header(text_file *file, nw_input *input, const char *header,
-                            size_t header_line, const char *wanted, nw_diagnostics *diagnostics)
-{
-    const char *end = header + strlen(header);
-    size_t names = nw_text_count_fields(&file->layout, header, end), data_line = file->line;
-    if (names != file->layout.columns) {
-        return nw_input_fault(input, data_line, 1, NW_INPUT, diagnostics,
-                              "found %zu field%s in this row, expected %zu as in the header",
-                              file->layout.columns, file->layout.columns == 1 ? "" : "s", names);
-    }
-    file->line = header_line;
-    nw_status status = choose_column(file, input, header, end, wanted, diagnostics);
-    file->line = data_line;
-    if (status == NW_OK) {
-        note_unit(file, input, header, end);
-    }
-    return status;
-}
-
-static nw_status read_header(text_file *file, nw_input *input, const char *end,
-                             const char *first_end, const char *wanted, nw_diagnostics *diagnostics)
-{
-    size_t length = (size_t)(end - file->at), line = file->line;
-    char *header = malloc(length + 1);
-    if (header == NULL) {
-        return nw_input_fault(input, 0, 0, NW_MEMORY, diagnostics, "out of memory");
-    }
-    memcpy(header, file->at, length);
-    header[length] = '\0';
-    file->at += first_end - file->at + 1;
-    file->line++;
-    const char *data_end;
-    nw_status status =
-        find_content(file, input, &data_end,
-                     "found a header and no values, expected at least one row", diagnostics);
-    if (status == NW_OK) {
-        set_columns(file, file->at, nw_text_content_end(file->at, data_end));
-        status = use_header(file, input, header, line, wanted, diagnostics);
-    }
-    free(header);
-    return status;
-}
-
-/* The first row of data tells the delimiter: names in a header may hold blanks. */
-static nw_status find_layout(text_file *file, nw_input *input, const nw_history_options *options,
-                             nw_diagnostics *diagnostics)
-{
-    const char *first_end, *data_end;
-    nw_status status = find_content(file, input, &first_end,
-                                    "found no values, expected at least one", diagnostics);
-    if (status != NW_OK) {
-        return status;
-    }
-    const char *end = nw_text_content_end(file->at, first_end);
-    text_file second = *file;
-    second.at = file->at + (first_end - file->at) + 1;
-    set_columns(file, file->at, end);
-    if (seek_content(&second, &data_end)) {
-        set_columns(file, second.at, nw_text_content_end(second.at, data_end));
-    }
-    file->layout.has_header = is_header(file, file->at, end, options->column);
-    if (file->layout.has_header) {
-        return read_header(file, input, end, first_end, options->column, diagnostics);
-    }
-    set_columns(file, file->at, end);
-    return choose_column(file, input, file->at, end, options->column, diagnostics);
-}
-
-static nw_status open_text(text_file *file, nw_input *input, const nw_history_options *options,
+static nw_status open_text(nw_text_file *file, nw_input *input, const nw_history_options *options,
                            nw_diagnostics *diagnostics)
 {
-    file->buffer = malloc(BUFFER_BYTES + 1 + NW_NUMBER_PADDING);
+    file->buffer = malloc(NW_TEXT_BUFFER_BYTES + 1 + NW_NUMBER_PADDING);
     if (file->buffer == NULL) {
         return nw_input_fault(input, 0, 0, NW_MEMORY, diagnostics, "out of memory");
     }
     file->layout.decimal = options->decimal == ',' ? ',' : '.';
     file->line = 1;
     file->at = file->end = file->lines_end = file->buffer;
-    nw_status status = fill(file, input, diagnostics);
+    nw_status status = nw_text_fill(file, input, diagnostics);
     if (status == NW_OK) {
         status = refuse_encoding(file, input, diagnostics);
     }
     if (status == NW_OK && file->end - file->at >= 3 && memcmp(file->at, "\xEF\xBB\xBF", 3) == 0) {
         file->at += 3;
     }
-    return status == NW_OK ? find_layout(file, input, options, diagnostics) : status;
+    return status == NW_OK ? nw_text_find_layout(file, input, options, diagnostics) : status;
 }
 
 static nw_status text_open(nw_input *input, const nw_history_options *options, void **state,
                            nw_diagnostics *diagnostics)
 {
     *state = NULL;
-    text_file *file = calloc(1, sizeof *file);
+    nw_text_file *file = calloc(1, sizeof *file);
     if (file == NULL) {
         return nw_input_fault(input, 0, 0, NW_MEMORY, diagnostics, "out of memory");
     }
