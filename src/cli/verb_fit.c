@@ -233,6 +233,23 @@ static nw_status take_text(const nw_arguments *arguments, const char *name, char
     return NW_OK;
 }
 
+/* A file that the program itself would refuse is not written. */
+static nw_status check_usable(const nw_material *m, nw_diagnostics *diagnostics)
+{
+    double b = m->fatigue_strength_exponent, c = m->fatigue_ductility_exponent;
+    bool life = b < 0.0 && c < b && m->fatigue_strength_coefficient_mpa > 0.0 &&
+                m->fatigue_ductility_coefficient > 0.0;
+    bool cyclic = isnan(m->hardening_exponent) ||
+                  (m->hardening_exponent >= 0.005 && m->hardening_exponent <= 0.6);
+    if (life && cyclic) {
+        return NW_OK;
+    }
+    return nw_fault(diagnostics, NW_COMPUTE, NULL, NULL,
+                    "--save: the fitted curve cannot be used (b %.4g, c %.4g, n' %.4g): expected "
+                    "c < b < 0 and n' from 0.005 to 0.6",
+                    b, c, m->hardening_exponent);
+}
+
 static nw_status save(const nw_arguments *arguments, const nw_coupons *coupons, const nw_fit *fit,
                       nw_diagnostics *diagnostics)
 {
@@ -240,6 +257,9 @@ static nw_status save(const nw_arguments *arguments, const nw_coupons *coupons, 
     nw_material material;
     nw_whole_file file;
     nw_status status = nw_fit_material(coupons, fit, &material, diagnostics);
+    if (status == NW_OK) {
+        status = check_usable(&material, diagnostics);
+    }
     if (status == NW_OK) {
         name_of_file(path, material.name, sizeof material.name);
         status = take_text(arguments, "--name", material.name, sizeof material.name, diagnostics);

@@ -6,11 +6,12 @@
 
 enum { CUSTOMARY_LEVELS = 5, CUSTOMARY_REPLICATES = 3 };
 
-static size_t left_out_for(const nw_fit_line *line, bool runout)
+/* Tests that a line leaves out because their plastic strain is too small; others have other reasons. */
+static size_t left_out_as_small(const nw_fit_line *line)
 {
     size_t count = 0;
     for (size_t i = 0; i < line->left_out_count; i++) {
-        count += (strcmp(line->left_out[i].reason, "run-out") == 0) == runout;
+        count += strstr(line->left_out[i].reason, "below the least") != NULL;
     }
     return count;
 }
@@ -56,7 +57,7 @@ static void about_lines(const nw_fit *fit, nw_cautions *out)
     } lines[] = {{&fit->plastic, "lines.plastic", "plastic"},
                  {&fit->elastic, "lines.elastic", "elastic"},
                  {&fit->cyclic, "lines.cyclic", "cyclic"}};
-    size_t small = left_out_for(&fit->plastic, false);
+    size_t small = left_out_as_small(&fit->plastic);
     if (small > 0) {
         nw_caution_add(out, "plastic_strains_left_out", "lines.plastic",
                        "%zu test%s left out of the plastic line: plastic strain amplitude below "
@@ -162,6 +163,21 @@ static void about_parameters(const nw_fit *fit, nw_cautions *out)
     }
 }
 
+/* A failed test that did not last one reversal: a life in thousands or millions of cycles, say. */
+static void about_short_lives(const nw_fit_work *work, nw_cautions *out)
+{
+    size_t below = 0;
+    for (size_t i = 0; i < work->count; i++) {
+        below += work->tests[i].log10_life < log10(0.5);
+    }
+    if (below > 0) {
+        nw_caution_add(out, "life_below_one_reversal", "tests",
+                       "%zu test%s lasted less than one reversal (half a cycle): check the unit of "
+                       "the lives.",
+                       below, below == 1 ? "" : "s");
+    }
+}
+
 /* Elastic strain too small a share of the total in every test: a strain in percent read as a ratio, say. */
 static void about_units(const nw_fit_work *work, nw_cautions *out)
 {
@@ -190,6 +206,7 @@ void nw_fit_cautions(nw_fit_work *work)
         nw_caution_add(out, c->code, c->about, "%s", c->text);
     }
     about_units(work, out);
+    about_short_lives(work, out);
     about_programme(fit, out);
     about_lines(fit, out);
     about_likelihood(fit, out);

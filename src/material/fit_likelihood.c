@@ -193,11 +193,21 @@ static void move_to_origin(const nw_curve_data *d, const double *theta, const do
     }
 }
 
+/* With equal slopes the two terms are one line, and its share between them is not determined. */
+static const double least_difference_of_slopes = 1e-3;
+
 static void fill_in(const nw_ls_problem *problem, const double *theta, double value,
                     nw_likelihood *result)
 {
     const nw_curve_data *d = problem->data;
     double covariance[NW_LS_MOST * NW_LS_MOST];
+    if (!(theta[1] - theta[3] > least_difference_of_slopes)) {
+        snprintf(
+            result->why, sizeof result->why,
+            "the tests do not show both an elastic and a plastic part: one line fits them as well "
+            "as two");
+        return;
+    }
     if (!nw_ls_covariance(problem, theta, covariance)) {
         snprintf(result->why, sizeof result->why,
                  "the tests do not determine all parameters of the curve");
@@ -229,8 +239,8 @@ static nw_status maximise(nw_ls_problem *problem, const nw_fit *fit, double *sta
     }
     if (!found) {
         snprintf(result->why, sizeof result->why,
-                 "the likelihood has no maximum: the points lie on a curve, or do not show both an "
-                 "elastic and a plastic part");
+                 "the likelihood has no maximum: the points lie on a curve, do not show both an "
+                 "elastic and a plastic part, or (with run-outs) ask for a flat elastic line");
         return NW_OK;
     }
     put_in_order(theta);

@@ -199,6 +199,8 @@ static void cautions(void **state)
         {"stress_amplitude[MPa],cycles\n948,222\n834,992\n703,6004\n631,14130\n", "",
          "line_not_fitted"},
         {"plastic_strain_amplitude,cycles\n0.01,500\n0.001,600\n", "", "outside_usual_range"},
+        {"plastic_strain_amplitude,cycles\n0.01,0.0005\n0.001,0.01\n", "",
+         "life_below_one_reversal"},
     };
     for (size_t i = 0; i < sizeof odd / sizeof odd[0]; i++) {
         test_scratch scratch = test_scratch_create();
@@ -212,15 +214,35 @@ static void cautions(void **state)
     }
 }
 
+/* Lives that rise with amplitude fit a curve that no assessment can use: no file is written. */
+static void rising_lives_are_not_saved(void **state)
+{
+    (void)state;
+    test_scratch scratch = test_scratch_create();
+    const char *path = test_scratch_text(&scratch, "tests.csv",
+                                         "strain_amplitude[%],stress_amplitude[MPa],cycles\n"
+                                         "1,500,10000\n0.5,400,1000\n0.3,300,100\n0.25,290,50\n");
+    test_result result =
+        test_shell("\"$NW\" fit '%s' --modulus '206 GPa' --save '%s/m.yaml'", path, scratch.path);
+    assert_int_equal(result.status, 4);
+    assert_non_null(strstr(result.err, "the fitted curve cannot be used"));
+    test_result_free(&result);
+    test_result listing = test_shell("ls '%s'", scratch.path);
+    assert_string_equal(listing.out, "tests.csv\n");
+    test_result_free(&listing);
+    test_scratch_remove(&scratch);
+}
+
 int main(void)
 {
     enum { ROWS = sizeof rows / sizeof rows[0] };
-    struct CMUnitTest tests[ROWS + 2];
+    struct CMUnitTest tests[ROWS + 3];
     for (size_t i = 0; i < ROWS; i++) {
         tests[i] =
             (struct CMUnitTest){rows[i].name, refuse, NULL, NULL, (void *)(uintptr_t)&rows[i]};
     }
     tests[ROWS] = (struct CMUnitTest)cmocka_unit_test(a_million_rows);
     tests[ROWS + 1] = (struct CMUnitTest)cmocka_unit_test(cautions);
+    tests[ROWS + 2] = (struct CMUnitTest)cmocka_unit_test(rising_lives_are_not_saved);
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
