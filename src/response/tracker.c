@@ -133,7 +133,8 @@ static inline __attribute__((always_inline)) nw_local_point *advance(nw_tracker 
 {
     nw_local_point *const base = tracker->stack;
     while (rising ? load >= top[-1].load_mpa : load <= top[-1].load_mpa) {
-        if (top == base + 1) { /* M3, unless just at the mirror image */
+        if (top == base + 1) {
+            /* Farther along the initial curve, or back on it (M3) unless just at the mirror image. */
             if (fabs(load) > fabs(top->load_mpa)) {
                 return go_on_initial(tracker, load, id);
             }
@@ -212,13 +213,6 @@ static inline __attribute__((always_inline)) nw_status advance_all(nw_tracker *t
     return keep_top(tracker, top);
 }
 
-/* The part stays on the initial curve when it moves on away from zero. */
-static bool stays_on_initial(const nw_tracker *tracker, double load)
-{
-    double now = tracker->stack[1].load_mpa;
-    return tracker->top == 1 && fabs(load) > fabs(now) && load * now >= 0.0;
-}
-
 nw_status nw_tracker_move(nw_tracker *tracker, double load_mpa, uint64_t id)
 {
     const nw_local_point *now = tracker->stack + tracker->top;
@@ -227,10 +221,6 @@ nw_status nw_tracker_move(nw_tracker *tracker, double load_mpa, uint64_t id)
         return NW_OK;
     }
     bool rising = load_mpa > now->load_mpa;
-    if (stays_on_initial(tracker, load_mpa)) {
-        go_on_initial(tracker, load_mpa, id);
-        return NW_OK;
-    }
     bool goes_on = tracker->top > 1 && rising == (now->load_mpa > now[-1].load_mpa);
     tracker->top -= goes_on;
     nw_status status = make_room(tracker, 1);
