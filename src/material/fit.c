@@ -134,6 +134,27 @@ static const char *base_name(const char *path)
     return slash == NULL ? path : slash + 1;
 }
 
+/* What the numbers of a material file do not tell: it goes with them as a note. */
+static void note_limits(const nw_fit *fit, nw_material *m)
+{
+    bool plain =
+        fit->options.distribution == NW_LOG_NORMAL && fit->options.scatter == NW_SCATTER_CONSTANT;
+    bool other_model = fit->method == NW_FIT_LIKELIHOOD && !plain;
+    snprintf(m->note, sizeof m->note, "%s%s%s%s%s", other_model ? "Lives were fitted as " : "",
+             other_model ? nw_distribution_name(fit->options.distribution) : "",
+             other_model ? " with scatter " : "",
+             other_model ? nw_scatter_model_name(fit->options.scatter) : "",
+             other_model
+                 ? "; the standard deviation given is that at the mean life and stands for a "
+                   "log-normal life. "
+                 : "");
+    if (strcmp(fit->verdict, "less than preliminary work") == 0) {
+        size_t used = strlen(m->note);
+        snprintf(m->note + used, sizeof m->note - used,
+                 "Fewer tests than is customary even for preliminary work.");
+    }
+}
+
 nw_status nw_fit_material(const nw_coupons *coupons, const nw_fit *fit, nw_material *m,
                           nw_diagnostics *diagnostics)
 {
@@ -182,5 +203,6 @@ nw_status nw_fit_material(const nw_coupons *coupons, const nw_fit *fit, nw_mater
         snprintf(m->source + used, sizeof m->source - used, "; %zu tests dropped",
                  fit->dropped_count);
     }
+    note_limits(fit, m);
     return NW_OK;
 }
