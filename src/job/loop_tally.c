@@ -1,8 +1,9 @@
 #include "job/loop_tally.h"
 
+#include "life/corrections.h"
+
 #include <math.h>
 #include <stdlib.h>
-#include <string.h>
 
 enum { BATCH = 256 };
 
@@ -39,18 +40,18 @@ static bool is_left_out(const nw_tally *tally, const nw_loop *loop)
     return range < fmin(gate_of(tally, loop->start.id), gate_of(tally, loop->tip.id));
 }
 
-/* Takes out the loops that are to be ignored; returns how many stay. */
-static size_t leave_out(nw_tally *tally, nw_loop *loops, double *rates, size_t count, double weight)
+/* Copies the loops that are not to be ignored, and their rates; returns how many stay. */
+static size_t leave_out(nw_tally *tally, const nw_loop *loops, size_t count, double weight,
+                        nw_loop *staying, double *rates)
 {
     size_t stay = 0;
     for (size_t i = 0; i < count; i++) {
         if (is_left_out(tally, &loops[i])) {
             tally->left_out.loops += weight;
             tally->left_out.damage += weight * rates[i];
-            tally->left_out_exceeded |=
-                0.5 * fabs(loops[i].start.strain - loops[i].tip.strain) >= tally->endurance;
+            tally->left_out_exceeded |= nw_loop_strain_amplitude(&loops[i]) >= tally->endurance;
         } else {
-            loops[stay] = loops[i];
+            staying[stay] = loops[i];
             rates[stay++] = rates[i];
         }
     }
@@ -108,25 +109,27 @@ static void note_endurance(nw_tally *tally, const nw_loop *loops, const double *
                            double weight)
 {
     for (size_t i = 0; i < count; i++) {
-        bool above = 0.5 * fabs(loops[i].start.strain - loops[i].tip.strain) >= tally->endurance;
+        bool above = nw_loop_strain_amplitude(&loops[i]) >= tally->endurance;
         tally->exceeded |= above;
         tally->damage_above += above ? weight * rates[i] : 0.0;
     }
 }
 
-static nw_status tally_batch(nw_tally *tally, nw_loop *loops, size_t count, double weight)
+static nw_status tally_batch(nw_tally *tally, const nw_loop *loops, size_t count, double weight)
 {
     double rates[BATCH];
+    nw_loop staying[BATCH];
     nw_life_rates(tally->life, loops, count, rates);
     if (tally->any_gate) {
-        count = leave_out(tally, loops, rates, count, weight);
+        count = leave_out(tally, loops, count, weight, staying, rates);
+        loops = staying;
     }
     double sum = 0.0, mean = tally->stress_mean_max_mpa;
     double fastest = tally->rate_max;
     for (size_t i = 0; i < count; i++) {
-        double middle = loops[i].start.stress_mpa + loops[i].tip.stress_mpa;
+        double own_mean = nw_loop_stress_mean(&loops[i]);
         sum += rates[i];
-        mean = 0.5 * middle > mean ? 0.5 * middle : mean;
+        mean = own_mean > mean ? own_mean : mean;
         fastest = rates[i] > fastest ? rates[i] : fastest;
     }
     tally->damage += weight * sum;
@@ -146,12 +149,10 @@ static nw_status tally_batch(nw_tally *tally, nw_loop *loops, size_t count, doub
 
 nw_status nw_tally_loops(void *data, const nw_loop *loops, size_t count, double weight)
 {
-    nw_loop batch[BATCH];
     nw_status status = NW_OK;
     for (size_t first = 0; first < count && status == NW_OK; first += BATCH) {
         size_t size = count - first < BATCH ? count - first : BATCH;
-        memcpy(batch, loops + first, size * sizeof *batch);
-        status = tally_batch(data, batch, size, weight);
+        status = tally_batch(data, loops + first, size, weight);
     }
     return status;
 }

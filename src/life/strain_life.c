@@ -1,5 +1,5 @@
 /* The strain-life curve in use, and what is read off it. */
-#include "notchwright/life.h"
+#include "life/corrections.h"
 
 #include <math.h>
 
@@ -44,11 +44,11 @@ nw_loop_values nw_loop_values_of(const nw_loop *loop)
     nw_loop_values v = {
         .load_max_mpa = fmax(a->load_mpa, b->load_mpa),
         .load_min_mpa = fmin(a->load_mpa, b->load_mpa),
-        .strain_amplitude = 0.5 * fabs(a->strain - b->strain),
+        .strain_amplitude = nw_loop_strain_amplitude(loop),
         .strain_mean = 0.5 * (a->strain + b->strain),
-        .stress_max_mpa = fmax(a->stress_mpa, b->stress_mpa),
+        .stress_max_mpa = nw_loop_stress_max(loop),
         .stress_min_mpa = fmin(a->stress_mpa, b->stress_mpa),
-        .stress_mean_mpa = 0.5 * (a->stress_mpa + b->stress_mpa),
+        .stress_mean_mpa = nw_loop_stress_mean(loop),
         .stress_amplitude_mpa = 0.5 * fabs(a->stress_mpa - b->stress_mpa),
     };
     return v;

@@ -50,7 +50,7 @@ static bool is_plain_name(const char *name)
     return name[0] != '\0' && name[0] != '.' && strchr(name, '/') == NULL && strlen(name) < 90;
 }
 
-enum { MOST_NAMES = 400, NAME_LENGTH = 96 };
+enum { NAME_LENGTH = 96 };
 
 /* Remembers the library name closest to `name`. */
 static void note_nearest(const char *folder, const char *name, char nearest[NAME_LENGTH])
