@@ -145,6 +145,15 @@ int nw_field_word(nw_field_reader *reader, const nw_node *node, const char *path
     return index;
 }
 
+void nw_field_check_format(nw_field_reader *reader, const nw_node *map, const char *key,
+                           const char *what, double format)
+{
+    if (!isnan(format) && format != 1.0) {
+        nw_field_fault(reader, nw_node_entry(map, key), "", key,
+                       "found %s format %g, expected 1, the one this version reads", what, format);
+    }
+}
+
 static void read_choice(nw_field_reader *reader, const nw_node *node, const char *path,
                         const nw_field *row, int *value)
 {

@@ -52,6 +52,11 @@ bool nw_field_quantity(nw_field_reader *reader, const nw_node *node, const char 
 int nw_field_word(nw_field_reader *reader, const nw_node *node, const char *path, const char *key,
                   const char *const *words);
 
+/* A fault at the entry `key` unless the format number read from it (NAN: absent) is the one this version reads.
+ * `what` is formatted: "case", "material". */
+void nw_field_check_format(nw_field_reader *reader, const nw_node *map, const char *key,
+                           const char *what, double format);
+
 /* Writes "path.key" (or "key"). */
 char *nw_field_path(char *text, size_t capacity, const char *path, const char *key);
 

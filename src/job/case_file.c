@@ -97,11 +97,7 @@ static nw_status read_tree(const nw_node *root, nw_case *result, nw_diagnostics 
     if (root->kind != NW_NODE_MAP) {
         return reader.status;
     }
-    if (!isnan(values.format) && values.format != 1.0) {
-        nw_field_fault(&reader, nw_node_entry(root, "notchwright"), "", "notchwright",
-                       "found case format %g, expected 1, the one this version reads",
-                       values.format);
-    }
+    nw_field_check_format(&reader, root, "notchwright", "case", values.format);
     nw_text_copy(result->title, sizeof result->title, values.title);
     if (nw_default_units_from_tree(root, "", &units, diagnostics) != NW_OK) {
         reader.status = NW_INPUT;

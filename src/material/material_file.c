@@ -37,8 +37,7 @@ typedef struct top {
 #define IN_MATERIAL(member) offsetof(nw_material, member)
 
 static const nw_field top_rows[] = {
-    {"notchwright_material", NW_FIELD_COUNT, NW_PURE, TOP(format), 0, false, 1, 1.5, false, false,
-     NULL},
+    {.key = "notchwright_material", .kind = NW_FIELD_COUNT, .offset = TOP(format)},
     {.key = "name", .kind = NW_FIELD_TEXT, .offset = TOP(material.name), .size = 96},
     {.key = "group", .kind = NW_FIELD_CHOICE, .offset = TOP(group), .choices = group_words},
     {.key = "basis", .kind = NW_FIELD_CHOICE, .offset = TOP(basis), .choices = basis_words},
@@ -159,26 +158,18 @@ static void require_file_keys(nw_field_reader *reader, const nw_node *map)
     }
 }
 
+enum { MOST_ESTIMATES = 32 };
+
 static const char *estimate_wanted(nw_field_reader *reader, const nw_node *map, const char *path)
 {
     const nw_node *node = nw_node_entry(map, "estimate");
-    if (node == NULL) {
-        return NULL;
+    const char *keys[MOST_ESTIMATES + 1] = {NULL};
+    const nw_estimate *record;
+    for (size_t i = 0; i < MOST_ESTIMATES && (record = nw_estimate_at(i)) != NULL; i++) {
+        keys[i] = record->key;
     }
-    const char *keys[33];
-    size_t count = 0;
-    for (const nw_estimate *e; count < 32 && (e = nw_estimate_at(count)) != NULL; count++) {
-        keys[count] = e->key;
-    }
-    keys[count] = NULL;
-    if (node->kind == NW_NODE_SCALAR && nw_choice_index(keys, node->scalar) >= 0) {
-        return node->scalar;
-    }
-    char list[400];
-    nw_field_fault(reader, node, path, "estimate", "found %s, expected %s",
-                   node->kind == NW_NODE_SCALAR ? node->scalar : "no single word",
-                   nw_text_join(list, sizeof list, keys));
-    return NULL;
+    int index = node == NULL ? -1 : nw_field_word(reader, node, path, "estimate", keys);
+    return index < 0 ? NULL : nw_estimate_at((size_t)index)->key;
 }
 
 nw_status nw_material_from_tree(const nw_node *map, const char *path, bool is_file,
@@ -195,6 +186,7 @@ nw_status nw_material_from_tree(const nw_node *map, const char *path, bool is_fi
     if (map->kind != NW_NODE_MAP) {
         return reader.status;
     }
+    nw_field_check_format(&reader, map, "notchwright_material", "material", values.format);
     values.material.group = (nw_group)values.group;
     values.material.basis = (nw_basis)values.basis;
     read_sections(&reader, map, path, &values.material);

@@ -215,7 +215,7 @@ static const bad_input rows[] = {
      .text = "notchwright: 1\nmaterial: {estimate: @divination, group: steel, ultimate_strength: "
              "820 MPa,\n"
              "  youngs_modulus: 206 GPa}\nnotch: {kt: 2}\nload: [{history: [0 MPa, 9 MPa]}]\n",
-     .message = "material.estimate: found divination, expected "},
+     .message = "material.estimate: found 'divination', expected "},
     {.name = "estimate_of_unfit_group",
      .text = "notchwright: 1\nmaterial: @{estimate: uniform_material_law, group: nickel,\n"
              "  ultimate_strength: 820 MPa, youngs_modulus: 206 GPa}\nnotch: {kt: 2}\n"
